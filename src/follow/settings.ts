@@ -1,0 +1,126 @@
+import type { Band } from '../science/bands.js';
+import type { StarClass } from '../science/classes.js';
+
+/** Where the telescope stands and how low it may look. */
+export interface Site {
+  readonly name: string;
+  readonly latitude_deg: number;
+  /** East positive. */
+  readonly longitude_deg: number;
+  readonly height_m: number;
+  /** IANA name for local times on the screen, e.g. 'UTC'. */
+  readonly timeZone: string;
+  readonly minAltitude_deg: number;
+  readonly maxAirmass: number;
+  /** Sun's altitude below which follow-up exposures may run. */
+  readonly sunLimit_deg: number;
+  /** Never suggest a target nearer the Moon than this. */
+  readonly moonDistance_deg: number;
+  /** Zenith seeing in the absence of a measured one. */
+  readonly seeing_arcsec: number;
+}
+
+export interface Telescope {
+  readonly aperture_m: number;
+  /** Linear central obstruction, 0 to 1. */
+  readonly obstruction: number;
+}
+
+/** How a band looks from this site: throughput of everything from the mirror to the electron. */
+export interface BandSettings {
+  readonly band: Band;
+  /** Optics x filter peak x detector QE, 0 to 1. */
+  readonly throughput: number;
+  readonly extinction_magPerAirmass: number;
+  readonly darkSky_magPerArcsec2: number;
+}
+
+export interface Detector {
+  readonly pixel_arcsec: number;
+  readonly readNoise_e: number;
+  readonly gain_ePerAdu: number;
+  readonly dark_ePerS: number;
+  readonly fullWell_e: number;
+  readonly bits: number;
+  readonly readout_s: number;
+}
+
+interface SetupCommon {
+  readonly name: string;
+  readonly detector: Detector;
+  readonly targetSnr: number;
+  readonly maxSingle_s: number;
+  readonly minCount: number;
+  /** Pointing, acquisition and guiding before the first exposure. */
+  readonly acquire_s: number;
+  /** Longest total worth suggesting. */
+  readonly maxTotal_s: number;
+}
+
+export interface ImagerSetup extends SetupCommon {
+  readonly kind: 'imager';
+  readonly band: Band;
+}
+
+export interface SpectrographSetup extends SetupCommon {
+  readonly kind: 'spectrograph';
+  /** Wavelength at which targetSnr per resolution element is wanted. */
+  readonly wavelength_nm: number;
+  readonly slit_arcsec: number;
+  readonly dispersion_nmPerPixel: number;
+  readonly resolution_nm: number;
+  /** Telescope to electron without slit losses, 0 to 1. */
+  readonly throughput: number;
+}
+
+export type Setup = ImagerSetup | SpectrographSetup;
+
+/** How far away and how reddened the field is. */
+export interface FieldSettings {
+  readonly name: string;
+  readonly population: 'field' | 'disc-cluster' | 'halo' | 'ob-association';
+  /** Cluster modulus (true, without extinction) where the field is a cluster; NaN otherwise. */
+  readonly modulus_mag: number;
+  readonly modulusSigma_mag: number;
+  /** Share of the field's stars that belong to the cluster, 0 to 1. */
+  readonly memberShare: number;
+  readonly extinction_AV: number;
+  readonly extinctionSigma_AV: number;
+  /** Length scale of the exponentially decreasing space density. */
+  readonly lengthScale_pc: number;
+  /** Subtracted from every parallax. */
+  readonly parallaxZeroPoint_mas: number;
+  /** Photometric floor added in quadrature to every band. */
+  readonly floor_mag: number;
+  /** Factors on the space densities of classes, 1 where absent. */
+  readonly classScale: Readonly<Partial<Record<StarClass, number>>>;
+}
+
+/** One flag's setting: off, or the odds (or significance) it needs and the weight it carries in the merit. */
+export interface FlagSetting {
+  readonly on: boolean;
+  readonly threshold: number;
+  readonly weight: number;
+}
+
+/** How files are read at this site. */
+export interface InputSettings {
+  /** Column meaning -> the name this pipeline uses, e.g. { 'mag.V': 'VMAG_CAL' }. */
+  readonly columns: Readonly<Record<string, string>>;
+  /** Band of files that carry a plain 'mag' column and do not name their band. */
+  readonly band: Band | undefined;
+  readonly matchRadius_arcsec: number;
+  readonly missing: readonly string[];
+}
+
+/** A whole profile, as every part of the program sees it. */
+export interface Profile {
+  readonly name: string;
+  readonly site: Site;
+  readonly telescope: Telescope;
+  readonly bands: readonly BandSettings[];
+  readonly setups: readonly Setup[];
+  readonly field: FieldSettings;
+  readonly flags: Readonly<Record<string, FlagSetting>>;
+  readonly input: InputSettings;
+}

@@ -1,0 +1,166 @@
+import type { Problem } from '../catalogue/problems.js';
+import type { Band, Colour } from '../science/bands.js';
+import type { StarClass } from '../science/classes.js';
+
+/** What the screens know of the night: made in the worker, sent whole, never changed afterwards. */
+export interface NightView {
+  readonly revision: number;
+  readonly frames: readonly FrameSummary[];
+  readonly problems: readonly Problem[];
+  /** Axes the night's bands allow, best first. */
+  readonly axes: Axes;
+  readonly stars: StarColumns;
+  /** Flagged stars, best first (merit, then start-by). */
+  readonly shortlist: readonly ShortlistEntry[];
+  readonly tracks: readonly Track[];
+  readonly conditions: Conditions;
+}
+
+export interface FrameSummary {
+  readonly index: number;
+  readonly name: string;
+  readonly mid_ms: number;
+  readonly bands: readonly Band[];
+  readonly rows: number;
+  readonly fwhm_arcsec: number;
+  readonly zeroPoint_mag: number;
+}
+
+export interface Axes {
+  readonly colour: Colour;
+  /** Band of the absolute magnitude on the y axis. */
+  readonly band: Band;
+}
+
+/** All stars of the night, one array element a star; NaN = not known. */
+export interface StarColumns {
+  readonly count: number;
+  readonly ids: readonly string[];
+  readonly ra_deg: Float64Array;
+  readonly dec_deg: Float64Array;
+  /** Apparent magnitude in axes.band. */
+  readonly mag: Float32Array;
+  readonly colour: Float32Array;
+  readonly absMag: Float32Array;
+  readonly absMagSigma: Float32Array;
+  /** Index into CLASSES of the most probable class, and its odds. */
+  readonly classIndex: Uint8Array;
+  readonly classOdds: Float32Array;
+  /** Spectral subtype as a number: O0 = 0, B0 = 10, ... M0 = 60, T0 = 80. */
+  readonly subtype: Float32Array;
+  readonly teff_K: Float32Array;
+  /** Bit i set: flag FLAG_CODES[i] is raised. */
+  readonly flagBits: Uint32Array;
+  /** Number of readings in all bands. */
+  readonly readings: Uint32Array;
+  /** Index of the newest frame that holds the star. */
+  readonly lastFrame: Uint32Array;
+}
+
+/** One mean sequence in the axes of the diagram, as a polyline. */
+export interface Track {
+  readonly name: string;
+  readonly colour: Float32Array;
+  readonly absMag: Float32Array;
+}
+
+export interface Conditions {
+  /** Medians over the newest frames; NaN = not measured. */
+  readonly fwhm_arcsec: number;
+  readonly zeroPointDrop_mag: number;
+  readonly sky_magPerArcsec2: number;
+  readonly sunAltitude_deg: number;
+  readonly moonAltitude_deg: number;
+  /** 0 new, 1 full. */
+  readonly moonIllumination: number;
+  /** Time of the next astronomical twilight, Unix ms; NaN when there is none within a day. */
+  readonly darkUntil_ms: number;
+}
+
+export interface RaisedFlag {
+  readonly code: string;
+  readonly odds: number;
+  /** Why, in one sentence with the numbers in it. */
+  readonly because: string;
+}
+
+export interface ShortlistEntry {
+  /** Place in StarColumns; stable for the whole night. */
+  readonly star: number;
+  readonly id: string;
+  readonly spectralType: string;
+  readonly flags: readonly RaisedFlag[];
+  readonly cautions: readonly string[];
+  readonly merit: number;
+  /** First setup's suggestion; the others are in the detail. */
+  readonly exposures: readonly ExposureSuggestion[];
+  readonly window: Window;
+  /** Index of the frame whose arrival raised the first flag. */
+  readonly firstFrame: number;
+}
+
+export interface ExposureSuggestion {
+  readonly setup: string;
+  readonly predicted_mag: number;
+  readonly predictedSigma_mag: number;
+  readonly count: number;
+  readonly each_s: number;
+  /** Wall time with overheads. */
+  readonly total_s: number;
+  readonly snr: number;
+  /** sky, star, read noise, scintillation, saturation, too faint, too bright ... */
+  readonly limitedBy: string;
+  /** False: not reachable, and limitedBy says why. */
+  readonly possible: boolean;
+}
+
+export interface Window {
+  readonly airmassNow: number;
+  readonly altitudeNow_deg: number;
+  /** Unix ms; NaN = not in this night. */
+  readonly upFrom_ms: number;
+  readonly upUntil_ms: number;
+  /** Latest start that still completes in the first possible setup. */
+  readonly startBy_ms: number;
+  /** Empty when it can be observed, else why not. */
+  readonly blockedBy: string;
+}
+
+/** Everything about one star, asked for when its screen opens. */
+export interface StarDetail {
+  readonly star: number;
+  readonly id: string;
+  readonly ra_deg: number;
+  readonly dec_deg: number;
+  readonly spectralType: string;
+  readonly luminosityClass: string;
+  readonly odds: Readonly<Record<StarClass, number>>;
+  readonly mags: readonly {
+    band: Band;
+    mag: number;
+    sigma_mag: number;
+    readings: number;
+    scatter_mag: number;
+  }[];
+  readonly absMag: { band: Band; value: number; sigma: number };
+  readonly teff_K: number;
+  readonly teffSigma_K: number;
+  readonly distance_pc: number;
+  readonly distanceLow_pc: number;
+  readonly distanceHigh_pc: number;
+  readonly extinction_AV: number;
+  readonly parallax_mas: number;
+  readonly parallaxSigma_mas: number;
+  readonly flags: readonly RaisedFlag[];
+  readonly cautions: readonly string[];
+  readonly exposures: readonly ExposureSuggestion[];
+  readonly window: Window;
+  readonly lightCurves: readonly LightCurve[];
+}
+
+export interface LightCurve {
+  readonly band: Band;
+  readonly time_ms: Float64Array;
+  readonly mag: Float64Array;
+  readonly sigma_mag: Float64Array;
+}
