@@ -1,5 +1,5 @@
 import type { Band } from '../science/bands.js';
-import type { StarClass } from '../science/classes.js';
+import type { FieldPrior } from '../science/odds/field.js';
 
 /** Where the telescope stands and how low it may look. */
 export interface Site {
@@ -76,24 +76,8 @@ export interface SpectrographSetup extends SetupCommon {
 export type Setup = ImagerSetup | SpectrographSetup;
 
 /** How far away and how reddened the field is. */
-export interface FieldSettings {
+export interface FieldSettings extends FieldPrior {
   readonly name: string;
-  readonly population: 'field' | 'disc-cluster' | 'halo' | 'ob-association';
-  /** Cluster modulus (true, without extinction) where the field is a cluster; NaN otherwise. */
-  readonly modulus_mag: number;
-  readonly modulusSigma_mag: number;
-  /** Share of the field's stars that belong to the cluster, 0 to 1. */
-  readonly memberShare: number;
-  readonly extinction_AV: number;
-  readonly extinctionSigma_AV: number;
-  /** Length scale of the exponentially decreasing space density. */
-  readonly lengthScale_pc: number;
-  /** Subtracted from every parallax. */
-  readonly parallaxZeroPoint_mas: number;
-  /** Photometric floor added in quadrature to every band. */
-  readonly floor_mag: number;
-  /** Factors on the space densities of classes, 1 where absent. */
-  readonly classScale: Readonly<Partial<Record<StarClass, number>>>;
 }
 
 /** One flag's setting: off, or the odds (or significance) it needs and the weight it carries in the merit. */

@@ -1,0 +1,106 @@
+import { BAND_COUNT, BANDS } from '../bands.js';
+import { CLASSES, type StarClass } from '../classes.js';
+import type { ClassModel } from './model.js';
+import { StarFit } from './star-fit.js';
+import type { StarInputs } from './star-inputs.js';
+
+/** What the model expects of one star in every band, seen from above the atmosphere. */
+export interface PredictedMagnitudes {
+  /** Laid out as BANDS; NaN where no likely node knows the band. */
+  readonly mag: Float64Array;
+  readonly sigma_mag: Float64Array;
+}
+
+/** The best node of one class for one star, with what it would want. */
+export interface ClassEvidence {
+  readonly starClass: StarClass;
+  readonly odds: number;
+  readonly subtype: number;
+  readonly teff_K: number;
+  readonly misfit_chi2: number;
+  readonly modulus_mag: number;
+  readonly extinction_AV: number;
+}
+
+export interface StarPosterior {
+  readonly predicted: PredictedMagnitudes;
+  readonly evidence: readonly ClassEvidence[];
+}
+
+/** Looks at one star in detail: allocates, and is meant for the stars on the screen. */
+export function starPosterior(model: ClassModel, inputs: StarInputs, i: number): StarPosterior {
+  const fit = new StarFit(model, inputs);
+  fit.fit(i);
+  return { predicted: predictMagnitudes(model, inputs, fit, i), evidence: evidenceByClass(model, fit) };
+}
+
+/**
+ * Magnitudes in every band from the posterior over nodes: each node predicts M_b + x + A_V a_b. A band that
+ * was observed is quoted as observed, whose error is the smaller one.
+ */
+function predictMagnitudes(
+  model: ClassModel,
+  inputs: StarInputs,
+  fit: StarFit,
+  i: number,
+): PredictedMagnitudes {
+  const mag = new Float64Array(BAND_COUNT).fill(Number.NaN);
+  const sigma_mag = new Float64Array(BAND_COUNT).fill(Number.NaN);
+  for (let band = 0; band < BAND_COUNT; band++) {
+    const observed = inputs.bands.indexOf(BANDS[band]);
+    if (observed >= 0 && !Number.isNaN(inputs.mag[observed][i])) {
+      mag[band] = inputs.mag[observed][i];
+      sigma_mag[band] = Math.hypot(inputs.sigma_mag[observed][i], model.field.floor_mag);
+      continue;
+    }
+    let weight = 0;
+    let sum = 0;
+    let sum2 = 0;
+    for (let slot = 0; slot < fit.survivors; slot++) {
+      const node = fit.node[slot];
+      const absMag = model.absMag[node * BAND_COUNT + band];
+      if (Number.isNaN(absMag)) continue;
+      const w = fit.weight[slot];
+      const m =
+        absMag +
+        fit.offset_mag[slot] +
+        fit.extinction_AV[slot] * model.extinctionRatio[node * BAND_COUNT + band];
+      weight += w;
+      sum += w * m;
+      sum2 += w * (m * m + model.nodes[node].bandScatter_mag ** 2);
+    }
+    if (weight < LEAST_WEIGHT) continue;
+    mag[band] = sum / weight;
+    sigma_mag[band] = Math.hypot(
+      Math.sqrt(Math.max(0, sum2 / weight - mag[band] ** 2)),
+      model.field.floor_mag,
+    );
+  }
+  return { mag, sigma_mag };
+}
+
+/** A prediction needs nodes with at least this much of the weight behind it. */
+const LEAST_WEIGHT = 0.05;
+
+function evidenceByClass(model: ClassModel, fit: StarFit): readonly ClassEvidence[] {
+  const best = new Map<number, number>();
+  for (let slot = 0; slot < fit.survivors; slot++) {
+    const c = model.classIndex[fit.node[slot]];
+    const known = best.get(c);
+    if (known === undefined || fit.weight[slot] > fit.weight[known]) best.set(c, slot);
+  }
+  return [...best]
+    .map(([c, slot]) => {
+      const node = model.nodes[fit.node[slot]];
+      return {
+        starClass: CLASSES[c],
+        odds: fit.classOdds[c],
+        subtype: node.subtype,
+        teff_K: node.teff_K,
+        misfit_chi2: fit.misfit_chi2[slot],
+        modulus_mag: fit.modulus_mag[slot],
+        extinction_AV: fit.extinction_AV[slot],
+      };
+    })
+    .sort((a, b) => b.odds - a.odds);
+}

@@ -1,0 +1,32 @@
+import type { Track, TrackPoint } from './track.js';
+
+/**
+ * Metal-poor subdwarfs: the dwarf sequence from F2 to M6, made fainter at fixed colour by the metallicity
+ * term of Ivezic et al. 2008, ApJ 684, 287, eq. A2, taken relative to solar (the term alone, not the
+ * sequence, which is 0.3 mag too bright at the turn-off): +0.93 mag at [Fe/H] -1, +1.26 at -1.5, +1.50 at -2.
+ * Published for -2.5 < [Fe/H] < 0.2. The M types are an extension of ours: sdM lie 1-2 mag below in
+ * red colours; in B-V they do not (Kapteyn's star), so B and U are left unknown from M0 on.
+ */
+export function subdwarfTrack(dwarfs: Track, metallicity_FeH: number): Track {
+  const offset_mag = subdwarfOffset_mag(metallicity_FeH);
+  const points = dwarfs.points
+    .filter(point => point.subtype >= FIRST_SUBTYPE && point.subtype <= LAST_SUBTYPE)
+    .map(point => subdwarfPoint(point, offset_mag));
+  return { name: `subdwarfs [Fe/H] ${metallicity_FeH.toFixed(1)}`, starClass: 'sd', points };
+}
+
+const FIRST_SUBTYPE = 32;
+const LAST_SUBTYPE = 66;
+const FIRST_M_SUBTYPE = 60;
+
+/** How much fainter than a solar-metallicity dwarf of the same colour; NaN outside the published range. */
+export function subdwarfOffset_mag(metallicity_FeH: number): number {
+  if (!(metallicity_FeH > -2.5 && metallicity_FeH < 0.2)) return Number.NaN;
+  return -1.11 * metallicity_FeH - 0.18 * metallicity_FeH ** 2;
+}
+
+function subdwarfPoint(point: TrackPoint, offset_mag: number): TrackPoint {
+  const absMag = point.absMag.map(value => value + offset_mag);
+  if (point.subtype >= FIRST_M_SUBTYPE) absMag.fill(Number.NaN, 0, 2);
+  return { ...point, absMag };
+}

@@ -1,0 +1,34 @@
+import { BAND_COUNT, BAND_INDEX, type Band } from '../bands.js';
+import type { StarClass } from '../classes.js';
+
+/** One tabulated star of a mean sequence. NaN: the sources do not give it. */
+export interface TrackPoint {
+  /** Running subtype number, see spectral-subtype.ts; NaN for white dwarfs. */
+  readonly subtype: number;
+  readonly teff_K: number;
+  readonly bolometricCorrection_V: number;
+  /** Absolute magnitude in every band, laid out as BANDS. */
+  readonly absMag: Float64Array;
+}
+
+/** A published mean sequence as a curve through the HR diagram. */
+export interface Track {
+  readonly name: string;
+  readonly starClass: StarClass;
+  readonly points: readonly TrackPoint[];
+}
+
+/** Absolute magnitudes by band, all unknown. */
+export function unknownMagnitudes(): Float64Array {
+  return new Float64Array(BAND_COUNT).fill(Number.NaN);
+}
+
+/** Sets a band unless it is already known: published values come before derived ones. */
+export function fillBand(absMag: Float64Array, band: Band, value: number): void {
+  const index = BAND_INDEX[band];
+  if (Number.isNaN(absMag[index])) absMag[index] = value;
+}
+
+export function magnitude(absMag: Float64Array, band: Band): number {
+  return absMag[BAND_INDEX[band]];
+}
