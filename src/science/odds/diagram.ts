@@ -28,7 +28,7 @@ export function tracksInAxes(tracks: readonly Track[], axes: DiagramAxes): reado
 }
 
 /** Lines that would only double a neighbour. */
-const HIDDEN = /DB$|\[Fe\/H\] -(1\.0|2\.0)$/;
+const HIDDEN = /DB$/;
 
 /** Where the class letters stand on the colour axis: at the middle (subtype 5) of each dwarf letter. */
 export function letterPositions(

@@ -55,6 +55,19 @@ export class DistanceTerm {
     return true;
   }
 
+  /** Offsets outside [0] to [1] are ruled out at this limit, for a track group of this variance. */
+  range(variance_mag2: number, limit_chi2: number, into: Float64Array): void {
+    if (this.gaussian) {
+      const reach = Math.sqrt(limit_chi2 * (this.variance_mag2 + variance_mag2));
+      into[0] = this.mean_mag - reach;
+      into[1] = this.mean_mag + reach;
+    } else {
+      const reach = REACH_SIGMA * Math.sqrt(variance_mag2);
+      into[0] = this.gridStart_mag - reach;
+      into[1] = this.gridStart_mag + this.gridCount * GRID_STEP_MAG + reach;
+    }
+  }
+
   private prepareGaussian(parallax_mas: number, sigma_mas: number): void {
     const distance_pc = 1000 / parallax_mas;
     const sigma_mag = (5 / Math.LN10) * (sigma_mas / parallax_mas);

@@ -23,6 +23,9 @@ export interface NoiseGroup {
   readonly bandVariance_mag2: number;
   readonly scatterGroup: number;
   readonly branches: readonly Branch[];
+  /** Largest and smallest brighter_mag of the branches. */
+  readonly brightest_mag: number;
+  readonly faintest_mag: number;
 }
 
 /**
@@ -97,7 +100,7 @@ function arrange(unsorted: readonly Node[], axes: DiagramAxes) {
   const scatters = [...new Set(unsorted.map(node => node.scatter_mag))].sort((a, b) => a - b);
   const byKey = new Map<string, Node[]>();
   for (const node of unsorted) {
-    const key = `${node.scatter_mag} ${node.bandScatter_mag} ${node.branches.length}`;
+    const key = `${node.scatter_mag} ${node.bandScatter_mag} ${node.branches.map(branch => branch.brighter_mag)}`;
     const members = byKey.get(key) ?? [];
     members.push(node);
     byKey.set(key, members);
@@ -117,6 +120,8 @@ function arrange(unsorted: readonly Node[], axes: DiagramAxes) {
       bandVariance_mag2: first.bandScatter_mag ** 2,
       scatterGroup: scatters.indexOf(first.scatter_mag),
       branches: first.branches,
+      brightest_mag: Math.max(...first.branches.map(branch => branch.brighter_mag)),
+      faintest_mag: Math.min(...first.branches.map(branch => branch.brighter_mag)),
     });
     nodes.push(...silent, ...known);
   }

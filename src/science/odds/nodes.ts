@@ -1,6 +1,7 @@
 import { BAND_COUNT, BAND_INDEX, BANDS } from '../bands.js';
 import { CLASS_INDEX, type StarClass } from '../classes.js';
 import { ExtinctionLaw } from '../extinction.js';
+import { SUBDWARF_FEH, subdwarfOffset_mag } from '../tracks/subdwarfs.js';
 import type { Track, TrackPoint } from '../tracks/track.js';
 import {
   dwarfDensity_perPc3PerMag,
@@ -83,6 +84,11 @@ const BRANCHES: Readonly<Partial<Record<StarClass, readonly Branch[]>>> = {
     { share: 0.05, brighter_mag: 0.753 },
     { share: 0.09, brighter_mag: -0.85 },
   ],
+  // Old thick disc, inner halo, outer halo: [Fe/H] -1.0, -1.5, -2.0 in equal parts.
+  sd: [-1.0, SUBDWARF_FEH, -2.0].map(metallicity => ({
+    share: 1 / 3,
+    brighter_mag: subdwarfOffset_mag(SUBDWARF_FEH) - subdwarfOffset_mag(metallicity),
+  })),
 };
 
 const SINGLE: readonly Branch[] = [{ share: 1, brighter_mag: 0 }];
@@ -130,8 +136,7 @@ function densityOf(
         ? ULTRACOOL_PER_PC3_PER_SUBTYPE * step_subtypes
         : dwarfDensity_perPc3PerMag(v) * step_mag;
     case 'sd':
-      // Three metallicities share the subdwarfs.
-      return (dwarfDensity_perPc3PerMag(v) * SUBDWARF_SHARE * step_mag) / 3;
+      return dwarfDensity_perPc3PerMag(v) * SUBDWARF_SHARE * step_mag;
     case 'WD':
       // Hydrogen atmospheres are the larger part (about five in six, from memory).
       return whiteDwarfDensity_perPc3PerMag(v) * step_mag * (track.name.endsWith('DA') ? 5 / 6 : 1 / 6);

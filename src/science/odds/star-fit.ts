@@ -43,6 +43,9 @@ export class StarFit {
   private readonly weights: Float64Array;
   private readonly weightProduct: Float64Array;
   private readonly variances: Float64Array;
+  private readonly lowest: Float64Array;
+  private readonly highest: Float64Array;
+  private readonly range = new Float64Array(2);
   private used = 0;
   private referenceSlot = 0;
   private priorAV = 0;
@@ -50,6 +53,7 @@ export class StarFit {
   private clusterParallax = 1;
   private fieldScale = 1;
   private clusterScale = 0;
+  private largest = 0;
   private foundDensity = 0;
   private foundMembers = 0;
   private foundModulus_mag = 0;
@@ -74,6 +78,8 @@ export class StarFit {
     this.usedMags = new Float64Array(this.bandCount);
     this.weights = new Float64Array(model.groups.length * this.bandCount);
     this.weightProduct = new Float64Array(model.groups.length);
+    this.lowest = new Float64Array(model.groups.length);
+    this.highest = new Float64Array(model.groups.length);
     this.variances = new Float64Array(model.scatterVariances_mag2.length);
     this.field = new DistanceTerm(model.field.lengthScale_pc, model.scatterVariances_mag2.length);
     this.cluster = hasCluster(model.field);
@@ -83,6 +89,7 @@ export class StarFit {
   fit(i: number): void {
     this.survivors = 0;
     this.memberOdds = 0;
+    this.largest = 0;
     this.classOdds.fill(0);
     this.takeMagnitudes(i);
     if (this.used === 0) {
@@ -142,6 +149,7 @@ export class StarFit {
       this.variances[g] = this.model.scatterVariances_mag2[g] + 1 / weight;
     }
     this.field.prepare(parallax, sigma, this.variances);
+    this.takeOffsetRanges();
     this.fieldScale = 1;
     this.clusterScale = 0;
     if (!this.cluster) return;
@@ -154,6 +162,26 @@ export class StarFit {
       const variance = sigma ** 2 + (expected_mas * (Math.LN10 / 5) * field.modulusSigma_mag) ** 2;
       const misfit = parallax - expected_mas;
       this.clusterParallax = Math.exp((-0.5 * misfit * misfit) / variance) / Math.sqrt(TWO_PI * variance);
+    }
+  }
+
+  /** Which offsets from its sequence each group's nodes may need at all, in field or cluster. */
+  private takeOffsetRanges(): void {
+    const { groups, field } = this.model;
+    // Room for the part of the offset that the extinction takes.
+    const slack = EXTINCTION_SLACK_SIGMA * Math.sqrt(this.priorAVVariance);
+    for (let g = 0; g < groups.length; g++) {
+      const group = groups[g];
+      this.field.range(this.variances[group.scatterGroup], JOINT_LIMIT_CHI2, this.range);
+      let [low, high] = this.range;
+      if (this.cluster) {
+        const spread = this.variances[group.scatterGroup] + field.modulusSigma_mag ** 2;
+        const reach = Math.sqrt(JOINT_LIMIT_CHI2 * spread);
+        low = Math.min(low, field.modulus_mag - reach);
+        high = Math.max(high, field.modulus_mag + reach);
+      }
+      this.lowest[g] = low - group.brightest_mag - slack;
+      this.highest[g] = high - group.faintest_mag + slack;
     }
   }
 
@@ -194,10 +222,17 @@ export class StarFit {
     const { model, used, usedBands, usedMags, weights, priorAV, priorAVVariance } = this;
     const { absMag, extinctionRatio } = model;
     const firstWeight = g * this.bandCount;
+    const reference = usedBands[this.referenceSlot];
+    const brightness = usedMags[this.referenceSlot] - priorAV;
+    const lowest = this.lowest[g];
+    const highest = this.highest[g] + priorAV;
     const priorPrecision = priorAVVariance > 0 ? 1 / priorAVVariance : 0;
     let total = 0;
     for (let k = from; k < to; k++) {
       const base = k * BAND_COUNT;
+      // Far too near or too far, whatever the colours say; an unknown magnitude passes.
+      const offset = brightness - absMag[base + reference];
+      if (offset < lowest - priorAV || offset > highest) continue;
       let s0 = 0;
       let s1 = 0;
       let s2 = 0;
@@ -298,10 +333,13 @@ export class StarFit {
     deviation_AV: number,
     extinctionVariance: number,
   ): number {
+    const density = likelihood * this.foundDensity;
+    if (density < NEGLIGIBLE * this.largest) return 0;
+    this.largest = Math.max(this.largest, density);
     // A negative extinction is refused, and the need of one counts against the node.
     const extinction = this.priorAV + deviation_AV;
     const positive = extinctionVariance > 0 ? normalTail(extinction / Math.sqrt(extinctionVariance)) : 1;
-    const weight = likelihood * positive * this.foundDensity;
+    const weight = density * positive;
     if (!(weight > 0)) return 0;
     const slot = this.survivors++;
     this.node[slot] = k;
@@ -362,10 +400,14 @@ const R_V = 3.1;
 /** A star's own E(B-V) is trusted to 10 %, never better than 0.05 mag of A_V. */
 const STAR_AV_ERROR = 0.1;
 const STAR_AV_FLOOR = 0.05;
-/** Nodes further off in colour are not looked at: e^-18 of their density is far below the flat class. */
-const MISFIT_LIMIT_CHI2 = 36;
+/** Nodes further off in colour are not looked at: e^-15 of their density is far below the flat class. */
+const MISFIT_LIMIT_CHI2 = 30;
+/** Nodes with less of the weight than this, against the best one, are not kept. */
+const NEGLIGIBLE = 1e-9;
 /** Misfit in colour and distance together beyond which a node is dropped. */
-const JOINT_LIMIT_CHI2 = 60;
+const JOINT_LIMIT_CHI2 = 48;
+/** An offset is stretched by less than this many sigma of the extinction prior. */
+const EXTINCTION_SLACK_SIGMA = 7;
 /** No colour changes by more than this per magnitude of A_V (U-yP1: 1.2; a colour of the axes: far less). */
 const LARGEST_REDDENING = 1.2;
 const MIN_COUNTS = 1e-30;

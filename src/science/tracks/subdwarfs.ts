@@ -12,8 +12,11 @@ export function subdwarfTrack(dwarfs: Track, metallicity_FeH: number): Track {
   const points = dwarfs.points
     .filter(point => point.subtype >= FIRST_SUBTYPE && point.subtype <= LAST_SUBTYPE)
     .map(point => subdwarfPoint(point, offset_mag));
-  return { name: `subdwarfs [Fe/H] ${metallicity_FeH.toFixed(1)}`, starClass: 'sd', points };
+  return { name: 'subdwarfs', starClass: 'sd', points };
 }
+
+/** Metallicity of the middle subdwarf sequence: the inner halo's. */
+export const SUBDWARF_FEH = -1.5;
 
 const FIRST_SUBTYPE = 32;
 const LAST_SUBTYPE = 66;
