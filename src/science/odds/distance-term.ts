@@ -74,7 +74,9 @@ export class DistanceTerm {
     this.variance_mag2 = sigma_mag * sigma_mag;
     // The space density tilts the likelihood: r^3 exp(-r/L) rises with the modulus by this slope.
     const slope = (Math.LN10 / 5) * (3 - distance_pc / this.lengthScale_pc);
-    this.mean_mag = 5 * Math.log10(distance_pc) - 5 + slope * this.variance_mag2;
+    // A Gaussian in the parallax is skewed in the modulus: its mean lies 1.5 k sigma^2 beyond (k = ln 10 / 5).
+    const skew = 1.5 * (Math.LN10 / 5);
+    this.mean_mag = 5 * Math.log10(distance_pc) - 5 + (slope + skew) * this.variance_mag2;
     // N(w; 1/r, sigma) dw = N(mu) d mu: the factor |d w / d mu| keeps it a density in the parallax.
     const jacobian = (Math.LN10 / 5) * parallax_mas;
     this.weight =

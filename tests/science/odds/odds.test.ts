@@ -1,0 +1,148 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { CLASSES } from '../../../src/science/classes.js';
+import { BV_AXES, classifyAll, OPEN_FIELD } from '../../support/star-inputs.js';
+
+const star = (absMag: number, bv: number, more: object = {}) => ({
+  mags: { V: absMag + 5, B: absMag + 5 + bv },
+  parallax_mas: 10,
+  parallaxSigma_mas: 0.1,
+  ...more,
+});
+
+describe('odds', () => {
+  it('sum to 1 for any star, near or far, with or without parallax', () => {
+    fc.assert(
+      fc.property(
+        fc.record({
+          absMag: fc.double({ min: -9, max: 18, noNaN: true }),
+          bv: fc.double({ min: -0.8, max: 2.5, noNaN: true }),
+          parallax_mas: fc.constantFrom(10, 0.3, -0.5, Number.NaN),
+          parallaxSigma_mas: fc.constantFrom(0.05, 0.5, 5),
+          sigma_mag: fc.constantFrom(0.001, 0.02, 0.3),
+        }),
+        ({ absMag, bv, ...rest }) => {
+          const [result] = classifyAll([star(absMag, bv, rest)], ['B', 'V'], BV_AXES);
+          const sum = CLASSES.reduce((total, name) => total + result.odds[name], 0);
+          expect(sum).toBeGreaterThan(0.9999);
+          expect(sum).toBeLessThan(1.0001);
+        },
+      ),
+      { numRuns: 60, seed: 17 },
+    );
+  });
+
+  it('do not depend on the order of the stars or of the bands', () => {
+    const stars = [star(4.8, 0.65), star(11.5, 0.05), star(0.7, 1.05)];
+    const forward = classifyAll(stars, ['B', 'V'], BV_AXES);
+    const backward = classifyAll([...stars].reverse(), ['V', 'B'], BV_AXES).reverse();
+    forward.forEach((result, i) => {
+      for (const name of CLASSES) expect(backward[i].odds[name]).toBeCloseTo(result.odds[name], 6);
+    });
+  });
+
+  it('flatten when all errors grow', () => {
+    const [sharp, blunt] = classifyAll(
+      [star(3, 0.9), star(3, 0.9, { sigma_mag: 0.2, parallaxSigma_mas: 3 })],
+      ['B', 'V'],
+      BV_AXES,
+    );
+    const largest = (odds: Readonly<Record<string, number>>) => Math.max(...Object.values(odds));
+    expect(largest(blunt.odds)).toBeLessThan(largest(sharp.odds));
+  });
+
+  it('a consistent further band never makes the right class much less likely', () => {
+    // A K0 giant: V-Ic 1.014 of the giants table.
+    const [two] = classifyAll([star(0.7, 1.0)], ['B', 'V'], BV_AXES);
+    const [three] = classifyAll(
+      [{ ...star(0.7, 1.0), mags: { V: 5.7, B: 6.7, Ic: 5.7 - 1.014 } }],
+      ['B', 'V', 'Ic'],
+      BV_AXES,
+    );
+    expect(three.odds.III).toBeGreaterThan(two.odds.III - 0.05);
+  });
+
+  it('a star without any magnitude is not known, not guessed', () => {
+    const [nothing] = classifyAll(
+      [{ mags: {}, parallax_mas: 10, parallaxSigma_mas: 0.1 }],
+      ['B', 'V'],
+      BV_AXES,
+    );
+    expect(nothing.odds.V).toBeNaN();
+    expect(nothing.text).toBe('not known');
+  });
+
+  it('a star far from every sequence fits no class', () => {
+    const [odd] = classifyAll([star(9, 0.45)], ['B', 'V'], BV_AXES);
+    expect(odd.best).toBe('none');
+    expect(odd.odds.none).toBeGreaterThan(0.9);
+  });
+});
+
+describe('distance', () => {
+  it('a good parallax gives M = m + 5 + 5 log10(parallax) within its own error', () => {
+    const [result] = classifyAll([star(4.8, 0.65)], ['B', 'V'], BV_AXES);
+    expect(result.absMag).toBeCloseTo(4.8, 1);
+  });
+
+  it('a negative parallax is used, not cut: the star is far, so the red one is a giant', () => {
+    const [far] = classifyAll(
+      [{ mags: { V: 13, B: 14.05 }, parallax_mas: -0.05, parallaxSigma_mas: 0.1 }],
+      ['B', 'V'],
+      BV_AXES,
+    );
+    expect(far.odds.III).toBeGreaterThan(0.9);
+  });
+
+  it('the grid of weak parallaxes meets the closed form of good ones where they join (S/N 10)', () => {
+    const of = (sigma: number) =>
+      classifyAll([star(2.2, 0.95, { parallaxSigma_mas: sigma })], ['B', 'V'], BV_AXES)[0];
+    const good = of(0.999);
+    const weak = of(1.001);
+    for (const name of CLASSES) expect(Math.abs(good.odds[name] - weak.odds[name])).toBeLessThan(0.06);
+    expect(Math.abs(good.absMag - weak.absMag)).toBeLessThan(0.05);
+  });
+
+  it('cluster members without parallax take the modulus of the cluster', () => {
+    const cluster = {
+      ...OPEN_FIELD,
+      population: 'disc-cluster' as const,
+      modulus_mag: 9.4,
+      modulusSigma_mag: 0.05,
+      memberShare: 0.7,
+      age_Gyr: 0.5,
+    };
+    const [member] = classifyAll([{ mags: { V: 9.4 + 4.8, B: 9.4 + 5.45 } }], ['B', 'V'], BV_AXES, cluster);
+    expect(member.columns.memberOdds[0]).toBeGreaterThan(0.6);
+    expect(Math.abs(member.absMag - 4.8)).toBeLessThan(0.4);
+  });
+
+  it('a parallax that contradicts the cluster makes a non-member', () => {
+    const cluster = {
+      ...OPEN_FIELD,
+      population: 'disc-cluster' as const,
+      modulus_mag: 9.4,
+      modulusSigma_mag: 0.05,
+      memberShare: 0.7,
+      age_Gyr: 0.5,
+    };
+    const [foreground] = classifyAll(
+      [{ mags: { V: 16.4, B: 16.45 }, parallax_mas: 10, parallaxSigma_mas: 0.1 }],
+      ['B', 'V'],
+      BV_AXES,
+      cluster,
+    );
+    expect(foreground.columns.memberOdds[0]).toBeLessThan(0.01);
+    expect(foreground.odds.WD).toBeGreaterThan(0.95);
+  });
+});
+
+describe('reddening', () => {
+  it('moves colour and magnitude together: a reddened Sun with its E(B-V) known is a G2 dwarf again', () => {
+    const av = 1.24;
+    const [sun] = classifyAll([star(4.8 + av, 0.65 + 0.4, { reddening_EBV: av / 3.1 })], ['B', 'V'], BV_AXES);
+    expect(sun.best).toBe('V');
+    expect(Math.abs(sun.subtype - 42)).toBeLessThan(2.5);
+    expect(Math.abs(sun.columns.extinction_AV[0] - av)).toBeLessThan(0.15);
+  });
+});
