@@ -1,3 +1,4 @@
+import type { InputSettings } from '../catalogue/input-settings.js';
 import type { Band } from '../science/bands.js';
 import type { FieldPrior } from '../science/odds/field.js';
 
@@ -85,16 +86,6 @@ export interface FlagSetting {
   readonly on: boolean;
   readonly threshold: number;
   readonly weight: number;
-}
-
-/** How files are read at this site. */
-export interface InputSettings {
-  /** Column meaning -> the name this pipeline uses, e.g. { 'mag.V': 'VMAG_CAL' }. */
-  readonly columns: Readonly<Record<string, string>>;
-  /** Band of files that carry a plain 'mag' column and do not name their band. */
-  readonly band: Band | undefined;
-  readonly matchRadius_arcsec: number;
-  readonly missing: readonly string[];
 }
 
 /** A whole profile, as every part of the program sees it. */

@@ -1,6 +1,10 @@
 import type { Problem } from '../catalogue/problems.js';
-import type { Band, Colour } from '../science/bands.js';
+import type { ExposureSuggestion } from '../follow/exposure/suggestion.js';
+import type { RaisedFlag } from '../follow/flags/index.js';
+import type { TargetWindow } from '../follow/sky/window.js';
+import type { Band } from '../science/bands.js';
 import type { StarClass } from '../science/classes.js';
+import type { DiagramAxes, TrackLine } from '../science/odds/index.js';
 
 /** What the screens know of the night: made in the worker, sent whole, never changed afterwards. */
 export interface NightView {
@@ -8,11 +12,13 @@ export interface NightView {
   readonly frames: readonly FrameSummary[];
   readonly problems: readonly Problem[];
   /** Axes the night's bands allow, best first. */
-  readonly axes: Axes;
+  readonly axes: DiagramAxes;
   readonly stars: StarColumns;
   /** Flagged stars, best first (merit, then start-by). */
   readonly shortlist: readonly ShortlistEntry[];
-  readonly tracks: readonly Track[];
+  readonly tracks: readonly TrackLine[];
+  /** Where the class letters stand on the colour axis. */
+  readonly letters: readonly { readonly letter: string; readonly colour: number }[];
   readonly conditions: Conditions;
 }
 
@@ -24,12 +30,6 @@ export interface FrameSummary {
   readonly rows: number;
   readonly fwhm_arcsec: number;
   readonly zeroPoint_mag: number;
-}
-
-export interface Axes {
-  readonly colour: Colour;
-  /** Band of the absolute magnitude on the y axis. */
-  readonly band: Band;
 }
 
 /** All stars of the night, one array element a star; NaN = not known. */
@@ -57,13 +57,6 @@ export interface StarColumns {
   readonly lastFrame: Uint32Array;
 }
 
-/** One mean sequence in the axes of the diagram, as a polyline. */
-export interface Track {
-  readonly name: string;
-  readonly colour: Float32Array;
-  readonly absMag: Float32Array;
-}
-
 export interface Conditions {
   /** Medians over the newest frames; NaN = not measured. */
   readonly fwhm_arcsec: number;
@@ -77,13 +70,6 @@ export interface Conditions {
   readonly darkUntil_ms: number;
 }
 
-export interface RaisedFlag {
-  readonly code: string;
-  readonly odds: number;
-  /** Why, in one sentence with the numbers in it. */
-  readonly because: string;
-}
-
 export interface ShortlistEntry {
   /** Place in StarColumns; stable for the whole night. */
   readonly star: number;
@@ -94,36 +80,9 @@ export interface ShortlistEntry {
   readonly merit: number;
   /** First setup's suggestion; the others are in the detail. */
   readonly exposures: readonly ExposureSuggestion[];
-  readonly window: Window;
+  readonly window: TargetWindow;
   /** Index of the frame whose arrival raised the first flag. */
   readonly firstFrame: number;
-}
-
-export interface ExposureSuggestion {
-  readonly setup: string;
-  readonly predicted_mag: number;
-  readonly predictedSigma_mag: number;
-  readonly count: number;
-  readonly each_s: number;
-  /** Wall time with overheads. */
-  readonly total_s: number;
-  readonly snr: number;
-  /** sky, star, read noise, scintillation, saturation, too faint, too bright ... */
-  readonly limitedBy: string;
-  /** False: not reachable, and limitedBy says why. */
-  readonly possible: boolean;
-}
-
-export interface Window {
-  readonly airmassNow: number;
-  readonly altitudeNow_deg: number;
-  /** Unix ms; NaN = not in this night. */
-  readonly upFrom_ms: number;
-  readonly upUntil_ms: number;
-  /** Latest start that still completes in the first possible setup. */
-  readonly startBy_ms: number;
-  /** Empty when it can be observed, else why not. */
-  readonly blockedBy: string;
 }
 
 /** Everything about one star, asked for when its screen opens. */
@@ -154,7 +113,7 @@ export interface StarDetail {
   readonly flags: readonly RaisedFlag[];
   readonly cautions: readonly string[];
   readonly exposures: readonly ExposureSuggestion[];
-  readonly window: Window;
+  readonly window: TargetWindow;
   readonly lightCurves: readonly LightCurve[];
 }
 

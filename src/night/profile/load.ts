@@ -26,8 +26,8 @@ export function profilePath(argument: string, folder: string): string {
 /** Reads and checks a profile file, problems and all. Throws a ProfileError when it cannot be read. */
 export function readProfile(path: string): ParsedProfile {
   try {
-    if (!statSync(path).isFile())
-      throw new ProfileError(`${path}: not an ordinary file; name a profile in TOML`);
+    const status = statSync(path);
+    if (!status.isFile()) throw new ProfileError(`${path}: not an ordinary file; name a profile in TOML`);
     if (status.size > LARGEST_BYTES) {
       throw new ProfileError(
         `${path}: ${status.size} bytes, a profile has at most ${LARGEST_BYTES}; is it the right file?`,

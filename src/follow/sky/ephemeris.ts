@@ -1,0 +1,121 @@
+import * as Astronomy from 'astronomy-engine';
+import type { Site } from '../settings.js';
+
+/** TT - UTC, seconds, since 2017: 37 leap seconds + 32.184. */
+const TT_MINUS_UTC_S = 69.184;
+/** Speed of light, au per day. */
+const LIGHT_AU_PER_DAY = 173.1446326846693;
+const MS_PER_DAY = 86_400_000;
+const RADIAN = Math.PI / 180;
+
+/** A direction as a unit vector in the equator and equinox of J2000. */
+export type Direction = readonly [number, number, number];
+
+export function directionOf(ra_deg: number, dec_deg: number): Direction {
+  const cosine = Math.cos(dec_deg * RADIAN);
+  return [cosine * Math.cos(ra_deg * RADIAN), cosine * Math.sin(ra_deg * RADIAN), Math.sin(dec_deg * RADIAN)];
+}
+
+/**
+ * Where things stand in the sky of a site. Sun, Moon and the Earth's orientation from astronomy-engine, which
+ * agrees with IAU 2006/2000A to arcseconds once its estimate of Delta T is replaced by the announced value.
+ */
+export class Ephemeris {
+  private readonly observer: Astronomy.Observer;
+
+  constructor(site: Pick<Site, 'latitude_deg' | 'longitude_deg' | 'height_m'>) {
+    // The library keeps this setting for the whole process; setting it again changes nothing.
+    Astronomy.SetDeltaTFunction(() => TT_MINUS_UTC_S);
+    this.observer = new Astronomy.Observer(site.latitude_deg, site.longitude_deg, site.height_m);
+  }
+
+  /** Row of the rotation from J2000 to the horizon that gives the sine of the altitude. */
+  zenithRow(time_ms: number): Direction {
+    const { rot } = Astronomy.Rotation_EQJ_HOR(timeOf(time_ms), this.observer);
+    return [rot[0][2], rot[1][2], rot[2][2]];
+  }
+
+  /** Airless altitude and azimuth (from north through east) of a star, degrees. */
+  starPlace(direction: Direction, time_ms: number): { altitude_deg: number; azimuth_deg: number } {
+    const { rot } = Astronomy.Rotation_EQJ_HOR(timeOf(time_ms), this.observer);
+    const [x, y, z] = this.withAberration(direction, time_ms);
+    const north = rot[0][0] * x + rot[1][0] * y + rot[2][0] * z;
+    const west = rot[0][1] * x + rot[1][1] * y + rot[2][1] * z;
+    const up = rot[0][2] * x + rot[1][2] * y + rot[2][2] * z;
+    return {
+      altitude_deg: Math.atan2(up, Math.hypot(north, west)) / RADIAN,
+      azimuth_deg: (Math.atan2(-west, north) / RADIAN + 360) % 360,
+    };
+  }
+
+  /** Direction as seen from the moving Earth: the light of a star comes from up to 20.5 arcsec ahead. */
+  withAberration(direction: Direction, time_ms: number): Direction {
+    const { vx, vy, vz } = Astronomy.BaryState(Astronomy.Body.Earth, timeOf(time_ms));
+    const moved = [
+      direction[0] + vx / LIGHT_AU_PER_DAY,
+      direction[1] + vy / LIGHT_AU_PER_DAY,
+      direction[2] + vz / LIGHT_AU_PER_DAY,
+    ] as const;
+    const length = Math.hypot(...moved);
+    return [moved[0] / length, moved[1] / length, moved[2] / length];
+  }
+
+  sunAltitude_deg(time_ms: number): number {
+    return this.bodyPlace(Astronomy.Body.Sun, time_ms).altitude;
+  }
+
+  moonAltitude_deg(time_ms: number): number {
+    return this.bodyPlace(Astronomy.Body.Moon, time_ms).altitude;
+  }
+
+  /** Illuminated share of the Moon's disc, 0 new, 1 full. */
+  moonIllumination(time_ms: number): number {
+    return Astronomy.Illumination(Astronomy.Body.Moon, timeOf(time_ms)).phase_fraction;
+  }
+
+  /** Direction of the Moon from the site itself (parallax up to a degree), J2000. */
+  moonDirection(time_ms: number): Direction {
+    const place = Astronomy.Equator(Astronomy.Body.Moon, timeOf(time_ms), this.observer, false, true);
+    return directionOf(place.ra * 15, place.dec);
+  }
+
+  /** Next time after `from_ms` that the Sun's centre passes an airless altitude, within `days`; NaN: it does not. */
+  nextSunAltitude_ms(rising: boolean, altitude_deg: number, from_ms: number, days: number): number {
+    return this.nextAltitude_ms(Astronomy.Body.Sun, rising, altitude_deg, from_ms, days);
+  }
+
+  /** Next time that the Moon's centre passes the airless horizon: what matters is its light, not its limb. */
+  nextMoonRiseOrSet_ms(rising: boolean, from_ms: number, days: number): number {
+    return this.nextAltitude_ms(Astronomy.Body.Moon, rising, 0, from_ms, days);
+  }
+
+  private nextAltitude_ms(
+    body: Astronomy.Body,
+    rising: boolean,
+    altitude_deg: number,
+    from_ms: number,
+    days: number,
+  ): number {
+    const direction = rising ? 1 : -1;
+    const found = Astronomy.SearchAltitude(
+      body,
+      this.observer,
+      direction,
+      timeOf(from_ms),
+      days,
+      altitude_deg,
+    );
+    return found === null ? Number.NaN : found.date.getTime();
+  }
+
+  private bodyPlace(body: Astronomy.Body, time_ms: number): Astronomy.HorizontalCoordinates {
+    const time = timeOf(time_ms);
+    const place = Astronomy.Equator(body, time, this.observer, true, true);
+    return Astronomy.Horizon(time, this.observer, place.ra, place.dec);
+  }
+}
+
+function timeOf(time_ms: number): Astronomy.AstroTime {
+  // The library counts days from 2000 January 1, 12 h UTC.
+  return new Astronomy.AstroTime(time_ms / MS_PER_DAY - 10_957.5);
+}
