@@ -22,7 +22,7 @@ const DARK_SKY = { B: 22.1, V: 21.2 };
 const EXTINCTION = { B: 0.25, V: 0.14 };
 const READ_NOISE_E = 7;
 const PIXEL_ARCSEC = 0.6;
-const FULL_WELL_E = 90_000;
+const FULL_WELL_E = 250_000;
 /** Flat field and colour terms: no reading is better than this. */
 const FLOOR_MAG = 0.004;
 

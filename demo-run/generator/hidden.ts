@@ -42,17 +42,17 @@ export function hiddenStars(random: Random): HiddenStar[] {
     {
       kind: 'supergiant far behind',
       flag: 'supergiant',
-      star: lone(atSubtype(trackNamed(tracks, 'supergiants Iab'), 52), 13_000, 0.38),
+      star: lone(atSubtype(trackNamed(tracks, 'supergiants Iab'), 52), 12_500, 0.38),
     },
     {
       kind: 'supergiant far behind',
       flag: 'supergiant',
-      star: lone(atSubtype(trackNamed(tracks, 'supergiants Iab'), 22), 14_000, 0.36),
+      star: lone(atSubtype(trackNamed(tracks, 'supergiants Iab'), 22), 15_000, 0.36),
     },
-    { kind: 'metal-poor subdwarf', flag: 'subdwarf', star: subdwarf(47, 1.35, 330) },
+    { kind: 'metal-poor subdwarf', flag: 'subdwarf', star: subdwarf(47, 1.6, 330) },
     { kind: 'metal-poor subdwarf', flag: 'subdwarf', star: subdwarf(51, 1.45, 260) },
-    { kind: 'blue straggler', flag: 'blue-straggler', star: member(0.55, 0.55 - 0.06, random) },
-    { kind: 'blue straggler', flag: 'blue-straggler', star: member(0.8, 0.8 - 0.03, random) },
+    { kind: 'blue straggler', flag: 'blue-straggler', star: member(0.4, 0.4 - 0.08, random) },
+    { kind: 'blue straggler', flag: 'blue-straggler', star: member(0.65, 0.65 - 0.05, random) },
     { kind: 'white dwarf with an M dwarf', flag: 'between-sequences', star: lone(pair, 85, 0.1) },
     {
       kind: 'star that fades',

@@ -3,7 +3,7 @@ export const SCENARIO = {
   seed: 20_261_108,
   field: { ra_deg: 36.1, dec_deg: 33.4, width_deg: 0.5 },
   cluster: {
-    modulus_mag: 9.4,
+    modulus_mag: 10.4,
     extinction_AV: 0.25,
     members: 560,
     giants: 7,
@@ -11,7 +11,7 @@ export const SCENARIO = {
     halfRadius_deg: 0.08,
     /** Brightest main-sequence member: what is left at 1.2 Gyr. */
     turnOff_absMagV: 1.8,
-    faintest_absMagV: 8.8,
+    faintest_absMagV: 7.9,
     binaryShare: 0.25,
     scatter_mag: 0.05,
   },
@@ -27,7 +27,7 @@ export const SCENARIO = {
     firstMid: '2026-11-08T18:40:00Z',
     frames: 36,
     interval_min: 15,
-    exposure_s: { B: 150, V: 75 },
+    exposure_s: { B: 40, V: 20 },
     /** From the end of an exposure to its table. */
     reduction_s: 45,
   },

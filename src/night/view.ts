@@ -9,9 +9,12 @@ import type { DiagramAxes, TrackLine } from '../science/odds/index.js';
 /** What the screens know of the night: made in the worker, sent whole, never changed afterwards. */
 export interface NightView {
   readonly revision: number;
+  readonly time_ms: number;
+  readonly field: string;
   readonly frames: readonly FrameSummary[];
+  /** Files whose content had been read before. */
+  readonly duplicates: number;
   readonly problems: readonly Problem[];
-  /** Axes the night's bands allow, best first. */
   readonly axes: DiagramAxes;
   readonly stars: StarColumns;
   /** Flagged stars, best first (merit, then start-by). */
@@ -29,7 +32,9 @@ export interface FrameSummary {
   readonly bands: readonly Band[];
   readonly rows: number;
   readonly fwhm_arcsec: number;
+  readonly airmass: number;
   readonly zeroPoint_mag: number;
+  readonly sky_magPerArcsec2: number;
 }
 
 /** All stars of the night, one array element a star; NaN = not known. */
@@ -57,17 +62,22 @@ export interface StarColumns {
   readonly lastFrame: Uint32Array;
 }
 
+/** The night as it stands; NaN = not measured or not tonight. */
 export interface Conditions {
-  /** Medians over the newest frames; NaN = not measured. */
-  readonly fwhm_arcsec: number;
+  /** Seeing at the zenith from the newest frames, else the profile's. */
+  readonly seeing_arcsec: number;
+  readonly seeingMeasured: boolean;
+  /** Newest frame's zero point below the best of the night in its band, magnitudes. */
   readonly zeroPointDrop_mag: number;
   readonly sky_magPerArcsec2: number;
   readonly sunAltitude_deg: number;
   readonly moonAltitude_deg: number;
   /** 0 new, 1 full. */
   readonly moonIllumination: number;
-  /** Time of the next astronomical twilight, Unix ms; NaN when there is none within a day. */
+  readonly darkFrom_ms: number;
   readonly darkUntil_ms: number;
+  /** 'dark 18:42-05:58 UT', or why it is not. */
+  readonly darkWords: string;
 }
 
 export interface ShortlistEntry {

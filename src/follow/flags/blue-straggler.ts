@@ -4,8 +4,8 @@ import { distanceWords, place, signed } from './words.js';
 
 /**
  * A cluster member on the main sequence above the cluster's own turn-off, where single stars of its age are
- * gone. Source: turn-off from the profile's age (main-sequence-lifetime.ts); margin of 0.3 mag for the
- * sequence's width (judgement).
+ * gone. Source: turn-off from the profile's age (main-sequence-lifetime.ts); margin of 0.75 mag, which
+ * an unresolved pair of two turn-off stars reaches.
  */
 export const blueStraggler: FlagRule = {
   code: 'blue-straggler',
@@ -26,6 +26,6 @@ export const blueStraggler: FlagRule = {
   },
 };
 
-const MARGIN_MAG = 0.3;
+const MARGIN_MAG = 0.75;
 /** Uncertainty of the turn-off itself. */
 const AGE_MARGIN_MAG = 0.2;

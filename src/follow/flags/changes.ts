@@ -16,11 +16,12 @@ function drift(evidence: StarEvidence, sign: 1 | -1) {
   const significance = Math.abs(change.change_mag) / change.changeSigma_mag;
   // One minus the chance of a false alarm among all stars and bands looked at.
   const odds = oneMinusTrials(2 * chanceAbove(-significance, 1, 0), evidence);
+  const digits = change.changeSigma_mag < 0.01 ? 3 : 2;
   const word = sign > 0 ? 'fainter' : 'brighter';
   return {
     odds,
     because: () =>
-      `${Math.abs(change.change_mag).toFixed(2)} ± ${change.changeSigma_mag.toFixed(2)} mag ${word} in ${change.band} than at ${clock(change.from_ms)} UT (${significance.toFixed(0)} sigma, ${change.readings} readings to ${clock(change.to_ms)} UT)`,
+      `${Math.abs(change.change_mag).toFixed(digits)} ± ${change.changeSigma_mag.toFixed(digits)} mag ${word} in ${change.band} than at ${clock(change.from_ms)} UT (${significance.toFixed(0)} sigma, ${change.readings} readings to ${clock(change.to_ms)} UT)`,
   };
 }
 

@@ -53,20 +53,17 @@ export function letterPositions(
   }).filter(position => !Number.isNaN(position.colour));
 }
 
-/** Absolute magnitude of a dwarf of this intrinsic colour, brightest branch first; NaN beyond the sequence. */
-export function dwarfAbsMagAt(tracks: readonly Track[], axes: DiagramAxes, colour: number): number {
-  for (const track of tracks) {
-    if (track.starClass !== 'V') continue;
-    for (let i = 0; i + 1 < track.points.length; i++) {
-      const a = colourOf(track.points[i], axes.colour);
-      const b = colourOf(track.points[i + 1], axes.colour);
-      if (!(a <= colour && colour < b)) continue;
-      const share = (colour - a) / (b - a);
-      const from = track.points[i].absMag[BAND_INDEX[axes.band]];
-      return from + share * (track.points[i + 1].absMag[BAND_INDEX[axes.band]] - from);
-    }
+/** Absolute magnitude of a sequence at a colour, the brightest where it passes twice; NaN where it does not. */
+export function absMagOnLine(line: TrackLine | undefined, colour: number): number {
+  let brightest = Number.NaN;
+  if (line === undefined) return brightest;
+  for (let i = 0; i + 1 < line.colour.length; i++) {
+    const [a, b] = [line.colour[i], line.colour[i + 1]];
+    if ((colour - a) * (colour - b) > 0 || a === b) continue;
+    const absMag = line.absMag[i] + ((colour - a) / (b - a)) * (line.absMag[i + 1] - line.absMag[i]);
+    if (!(absMag > brightest)) brightest = absMag;
   }
-  return Number.NaN;
+  return brightest;
 }
 
 function colourOf(point: TrackPoint, colour: Colour): number {

@@ -1,5 +1,4 @@
 import { BAND_COUNT, BANDS } from '../bands.js';
-import { CLASSES, type StarClass } from '../classes.js';
 import type { ClassModel } from './model.js';
 import { StarFit } from './star-fit.js';
 import type { StarInputs } from './star-inputs.js';
@@ -11,27 +10,22 @@ export interface PredictedMagnitudes {
   readonly sigma_mag: Float64Array;
 }
 
-/** The best node of one class for one star, with what it would want. */
-export interface ClassEvidence {
-  readonly starClass: StarClass;
-  readonly odds: number;
-  readonly subtype: number;
-  readonly teff_K: number;
-  readonly misfit_chi2: number;
-  readonly modulus_mag: number;
-  readonly extinction_AV: number;
-}
+/** Looks at single stars in detail, in buffers that are used again: meant for the stars on the screen. */
+export class PosteriorReader {
+  private readonly fit: StarFit;
 
-export interface StarPosterior {
-  readonly predicted: PredictedMagnitudes;
-  readonly evidence: readonly ClassEvidence[];
-}
+  constructor(
+    private readonly model: ClassModel,
+    private readonly inputs: StarInputs,
+  ) {
+    this.fit = new StarFit(model, inputs);
+  }
 
-/** Looks at one star in detail: allocates, and is meant for the stars on the screen. */
-export function starPosterior(model: ClassModel, inputs: StarInputs, i: number): StarPosterior {
-  const fit = new StarFit(model, inputs);
-  fit.fit(i);
-  return { predicted: predictMagnitudes(model, inputs, fit, i), evidence: evidenceByClass(model, fit) };
+  /** Magnitudes of star i in every band. */
+  predicted(i: number): PredictedMagnitudes {
+    this.fit.fit(i);
+    return predictMagnitudes(this.model, this.inputs, this.fit, i);
+  }
 }
 
 /**
@@ -81,26 +75,3 @@ function predictMagnitudes(
 
 /** A prediction needs nodes with at least this much of the weight behind it. */
 const LEAST_WEIGHT = 0.05;
-
-function evidenceByClass(model: ClassModel, fit: StarFit): readonly ClassEvidence[] {
-  const best = new Map<number, number>();
-  for (let slot = 0; slot < fit.survivors; slot++) {
-    const c = model.classIndex[fit.node[slot]];
-    const known = best.get(c);
-    if (known === undefined || fit.weight[slot] > fit.weight[known]) best.set(c, slot);
-  }
-  return [...best]
-    .map(([c, slot]) => {
-      const node = model.nodes[fit.node[slot]];
-      return {
-        starClass: CLASSES[c],
-        odds: fit.classOdds[c],
-        subtype: node.subtype,
-        teff_K: node.teff_K,
-        misfit_chi2: fit.misfit_chi2[slot],
-        modulus_mag: fit.modulus_mag[slot],
-        extinction_AV: fit.extinction_AV[slot],
-      };
-    })
-    .sort((a, b) => b.odds - a.odds);
-}

@@ -1,0 +1,165 @@
+import type { Problem } from '../catalogue/problems.js';
+import { readFrame } from '../catalogue/read-frame.js';
+import { StarCatalogue } from '../catalogue/stars.js';
+import type { Profile } from '../follow/settings.js';
+import {
+  buildModel,
+  type ClassModel,
+  classifySome,
+  growOddsColumns,
+  makeOddsColumns,
+  type OddsColumns,
+  type StarInputs,
+} from '../science/odds/index.js';
+import { chooseAxes } from './axes.js';
+import { ChangeSearch } from './change-search.js';
+import { EvidenceMaker } from './evidence.js';
+import { FlagBook } from './flag-book.js';
+import { FrameLog } from './frame-log.js';
+import type { FrameSummary } from './view.js';
+
+/** What happened to one file. */
+export interface FileOutcome {
+  readonly name: string;
+  readonly kind: 'read' | 'replaced' | 'known' | 'refused';
+  /** Index of the frame; -1 where there is none. */
+  readonly frame: number;
+  readonly problems: readonly Problem[];
+}
+
+/**
+ * One night's state: every file read so far, the stars they merge into, what each star is, and which are
+ * unusual. Knows neither disk nor clock; the worker and `classify` feed it.
+ */
+export class NightEngine {
+  readonly catalogue: StarCatalogue;
+  readonly flags: FlagBook;
+  model: ClassModel;
+  inputs: StarInputs;
+  odds: OddsColumns = makeOddsColumns(1024);
+  readonly problems: Problem[] = [];
+  /** Files whose content had been read before. */
+  duplicates = 0;
+  private readonly summaries = new Map<number, FrameSummary>();
+  private readonly log = new FrameLog();
+  private readonly changes = new ChangeSearch();
+  private capacity = 1024;
+
+  constructor(readonly profile: Profile) {
+    this.catalogue = new StarCatalogue(profile.input.matchRadius_arcsec);
+    this.flags = new FlagBook(profile.flags);
+    this.model = this.modelFor();
+    this.inputs = this.readInputs();
+  }
+
+  /** Frames in order of time; plain catalogues first. */
+  get frames(): readonly FrameSummary[] {
+    return [...this.summaries.values()].sort(
+      (a, b) =>
+        (Number.isNaN(a.mid_ms) ? 0 : a.mid_ms) - (Number.isNaN(b.mid_ms) ? 0 : b.mid_ms) ||
+        a.index - b.index,
+    );
+  }
+
+  /** Reads one file and lets everything that depends on it follow. */
+  absorb(name: string, bytes: Uint8Array): FileOutcome {
+    const taken = this.take(name, bytes);
+    if (taken.frame >= 0) this.follow(taken.frame, taken.stars);
+    return taken;
+  }
+
+  /** Reads many files and follows once at the end: for a night that is already over. */
+  absorbAll(files: Iterable<{ readonly name: string; readonly bytes: Uint8Array }>): FileOutcome[] {
+    const outcomes: FileOutcome[] = [];
+    let last = -1;
+    for (const { name, bytes } of files) {
+      const taken = this.take(name, bytes);
+      if (taken.frame >= 0) last = taken.frame;
+      outcomes.push(taken);
+    }
+    if (last >= 0) this.follow(last, everyStar(this.catalogue.count));
+    return outcomes;
+  }
+
+  private take(name: string, bytes: Uint8Array): FileOutcome & { readonly stars: Iterable<number> } {
+    const { frame, problems } = readFrame(name, bytes, this.profile.input);
+    this.problems.push(...problems);
+    if (frame === undefined) return { name, kind: 'refused', frame: -1, problems, stars: [] };
+    const fate = this.log.decide(name, bytes);
+    if (fate.kind === 'known') {
+      this.duplicates++;
+      return { name, kind: 'known', frame: -1, problems, stars: [] };
+    }
+    const stars = this.catalogue.absorb(frame, fate.index);
+    const { facts } = frame;
+    this.summaries.set(fate.index, {
+      index: fate.index,
+      name: facts.name,
+      mid_ms: facts.mid_ms,
+      bands: frame.bands.map(({ band }) => band),
+      rows: frame.rows,
+      fwhm_arcsec: facts.fwhm_arcsec,
+      airmass: facts.airmass,
+      zeroPoint_mag: facts.zeroPoint_mag,
+      sky_magPerArcsec2: facts.sky_magPerArcsec2,
+    });
+    const replaced = fate.kind === 'replacement';
+    return {
+      name,
+      kind: replaced ? 'replaced' : 'read',
+      frame: fate.index,
+      problems,
+      // A replaced frame may have lost stars: all of them are looked at again.
+      stars: replaced ? everyStar(this.catalogue.count) : stars,
+    };
+  }
+
+  /** Classifies and judges the stars that a frame touched. */
+  private follow(frame: number, touched: Iterable<number>): void {
+    this.ensureRoom();
+    this.inputs = this.readInputs();
+    const axes = chooseAxes(
+      this.catalogue.bands,
+      this.profile.bands.map(({ band }) => band),
+    );
+    const sameAxes = JSON.stringify(axes) === JSON.stringify(this.model.axes);
+    if (!sameAxes) this.model = this.modelFor();
+    const stars = sameAxes ? touched : everyStar(this.catalogue.count);
+    classifySome(this.model, this.inputs, stars, this.odds);
+    const changed = this.changes.search(this.catalogue, this.frames);
+    const evidence = new EvidenceMaker(this, changed);
+    for (const star of stars) this.flags.judge(star, evidence.of(star), frame);
+  }
+
+  private modelFor(): ClassModel {
+    const axes = chooseAxes(
+      this.catalogue.bands,
+      this.profile.bands.map(({ band }) => band),
+    );
+    return buildModel(this.profile.field, axes);
+  }
+
+  private readInputs(): StarInputs {
+    const { catalogue } = this;
+    const bands = catalogue.bands;
+    return {
+      count: catalogue.count,
+      bands,
+      mag: bands.map(band => catalogue.mag(band)),
+      sigma_mag: bands.map(band => catalogue.sigma(band)),
+      parallax_mas: catalogue.parallax_mas,
+      parallaxSigma_mas: catalogue.parallax_sigma_mas,
+      reddening_EBV: catalogue.reddening_EBV,
+    };
+  }
+
+  private ensureRoom(): void {
+    if (this.catalogue.count <= this.capacity) return;
+    this.capacity = Math.ceil(this.catalogue.count * 1.5);
+    this.odds = growOddsColumns(this.odds, this.capacity);
+  }
+}
+
+function* everyStar(count: number): Iterable<number> {
+  for (let star = 0; star < count; star++) yield star;
+}

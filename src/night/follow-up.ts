@@ -1,0 +1,82 @@
+import { ExposureAdviser } from '../follow/exposure/suggest.js';
+import type { Conditions as ExposureConditions, ExposureSuggestion } from '../follow/exposure/suggestion.js';
+import type { TargetWindow } from '../follow/sky/window.js';
+import { PosteriorReader } from '../science/odds/index.js';
+import { zenithSeeing_arcsec } from '../science/photometry/seeing.js';
+import { median } from '../science/statistics.js';
+import type { NightEngine } from './engine.js';
+import { SkyNow } from './sky-now.js';
+import type { FrameSummary } from './view.js';
+
+/** Frames whose seeing counts as tonight's: the newest few. */
+const RECENT_FRAMES = 4;
+
+/** Exposures and window of one star at one time. */
+export interface FollowUp {
+  readonly exposures: readonly ExposureSuggestion[];
+  readonly window: TargetWindow;
+}
+
+/** Works out what observing a star would take, with tonight's seeing. */
+export class FollowUpDesk {
+  readonly sky: SkyNow;
+  private readonly adviser: ExposureAdviser;
+  private reader: PosteriorReader | undefined;
+  private readFor: unknown;
+
+  constructor(private readonly engine: NightEngine) {
+    this.sky = new SkyNow(engine.profile);
+    this.adviser = new ExposureAdviser(engine.profile);
+  }
+
+  of(star: number, now_ms: number): FollowUp {
+    const { catalogue, profile } = this.engine;
+    const [ra, dec] = [catalogue.ra_deg[star], catalogue.dec_deg[star]];
+    const any = this.sky.windowOf(ra, dec, now_ms, 0);
+    // A star that is not up yet is worked out for the airmass at which it may be begun.
+    const up = any.upFrom_ms <= now_ms && any.airmassNow <= profile.site.maxAirmass;
+    const exposures = this.adviser.suggest(this.posterior().predicted(star), {
+      ...this.conditions(),
+      airmass: up ? any.airmassNow : profile.site.maxAirmass,
+    });
+    const first = exposures.find(exposure => exposure.possible);
+    return { exposures, window: this.sky.windowOf(ra, dec, now_ms, first?.total_s ?? 0) };
+  }
+
+  /** Seeing at the zenith from the newest frames, the profile's until there are any. */
+  seeing_arcsec(): number {
+    const measured = this.engine.frames
+      .filter(frame => frame.fwhm_arcsec > 0)
+      .slice(-RECENT_FRAMES)
+      .map(frame =>
+        zenithSeeing_arcsec(
+          frame.fwhm_arcsec,
+          Number.isNaN(frame.airmass) ? 1 : frame.airmass,
+          this.wavelength_nm(frame),
+        ),
+      );
+    return measured.length === 0 ? this.engine.profile.site.seeing_arcsec : median(measured);
+  }
+
+  private conditions(): Omit<ExposureConditions, 'airmass'> {
+    return {
+      seeing_arcsec: this.seeing_arcsec(),
+      siteHeight_m: this.engine.profile.site.height_m,
+      cloud_mag: 0,
+    };
+  }
+
+  private wavelength_nm(frame: FrameSummary): number {
+    const [band] = frame.bands;
+    return (band === undefined ? undefined : this.adviser.passbands.get(band)?.wavelength_nm) ?? 550;
+  }
+
+  /** One reader per state of the stars: its buffers are large. */
+  private posterior(): PosteriorReader {
+    if (this.reader === undefined || this.readFor !== this.engine.inputs) {
+      this.readFor = this.engine.inputs;
+      this.reader = new PosteriorReader(this.engine.model, this.engine.inputs);
+    }
+    return this.reader;
+  }
+}
