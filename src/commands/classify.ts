@@ -1,0 +1,61 @@
+import { basename } from 'node:path';
+import { formatProblem, makeProblem, type Problem } from '../catalogue/problems.js';
+import { safeText } from '../catalogue/safe-text.js';
+import { NightEngine } from '../night/engine.js';
+import { FollowUpDesk } from '../night/follow-up.js';
+import { isRefusal, readWhole } from '../night/watcher/safe-file.js';
+import { EXIT, UsageError } from './exit-codes.js';
+import type { CommandIo } from './io.js';
+import { profileFor } from './load-profile.js';
+import { FORMATS } from './output/formats.js';
+import { RecordMaker } from './output/star-record.js';
+
+interface ClassifyOptions {
+  readonly profile?: string;
+  readonly format: keyof typeof FORMATS;
+  readonly flagged?: boolean;
+  readonly at?: number;
+}
+
+/** Lines go out in pieces of this many characters. */
+const PIECE = 1 << 16;
+
+/** Reads files as one night, and prints every star (or the flagged ones). */
+export async function classifyCommand(
+  files: readonly string[],
+  options: ClassifyOptions,
+  io: CommandIo,
+): Promise<number> {
+  const engine = new NightEngine(profileFor(options.profile, io));
+  const read: { name: string; bytes: Uint8Array }[] = [];
+  const problems: Problem[] = [];
+  for (const path of files) {
+    const bytes = await readWhole(path);
+    if (bytes === undefined) throw new UsageError(`${path}: no such file`);
+    const name = basename(path);
+    if (isRefusal(bytes)) problems.push(makeProblem(bytes.code, safeText(name), 0, bytes.seen));
+    else read.push({ name, bytes });
+  }
+  for (const { problems: found } of engine.absorbAll(read)) problems.push(...found);
+  for (const problem of problems) io.err(`${formatProblem(problem)}\n`);
+  await printStars(engine, options, io);
+  return problems.some(problem => problem.cost === 'file') ? EXIT.someUnreadable : EXIT.ok;
+}
+
+async function printStars(engine: NightEngine, options: ClassifyOptions, io: CommandIo): Promise<void> {
+  const { head, line } = FORMATS[options.format];
+  const maker = new RecordMaker(engine, new FollowUpDesk(engine), options.at ?? io.now_ms());
+  let piece = head === '' ? '' : `${head}\n`;
+  const readings = engine.catalogue.readings;
+  for (let star = 0; star < engine.catalogue.count; star++) {
+    const flagged = (engine.flags.of(star)?.flags.length ?? 0) > 0;
+    // A star of an astrometry table that was never seen has nothing to classify.
+    if (readings[star] === 0 || (options.flagged === true && !flagged)) continue;
+    piece += `${line(maker.of(star))}\n`;
+    if (piece.length > PIECE) {
+      await io.out(piece);
+      piece = '';
+    }
+  }
+  if (piece !== '') await io.out(piece);
+}

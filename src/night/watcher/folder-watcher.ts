@@ -1,0 +1,169 @@
+import { type FSWatcher as FolderHandle, watch as watchFolder } from 'node:fs';
+import { readdir, stat } from 'node:fs/promises';
+import { basename, dirname, join, resolve } from 'node:path';
+import { type FSWatcher, watch as watchParent } from 'chokidar';
+import { isComplete } from './completeness.js';
+import { glance, isRefusal, type Refusal, readWhole } from './safe-file.js';
+
+export interface WatchHandlers {
+  /** A finished file, or one that changed since it was read. Awaited before the next is read. */
+  readonly onFile: (name: string, bytes: Uint8Array) => Promise<void> | void;
+  readonly onRefused: (name: string, refusal: Refusal) => void;
+  /** The folder is there (true) or gone (false). */
+  readonly onFolder: (present: boolean) => void;
+  /** Nothing waits to be read. */
+  readonly onIdle: () => void;
+}
+
+/** Names that writers use for what is not finished, and hidden files. */
+const UNFINISHED = /^\.|~$|\.(?:tmp|temp|part|partial|filepart|crdownload|swp|lock)$/i;
+
+const SETTLE_MS = 10;
+const RECHECK_MS = 40;
+const RELIST_MS = 5000;
+const POLL_MS = 2000;
+
+/**
+ * Watches one folder for photometry files. The system's notices say where to look at once; a full list every few
+ * seconds catches what they miss, and is all there is on network file systems (`poll`). The folder's parent is
+ * watched for the folder itself being removed and made again, which its own watch would not survive.
+ */
+export class FolderWatcher {
+  private readonly folder: string;
+  private readonly parent: FSWatcher;
+  private handle: FolderHandle | undefined;
+  private readonly waiting = new Set<string>();
+  /** Size and time of each file when it was last delivered or refused. */
+  private readonly done = new Map<string, string>();
+  private timer: NodeJS.Timeout | undefined;
+  private readonly relist: NodeJS.Timeout;
+  private working = false;
+  private closed = false;
+
+  constructor(
+    folder: string,
+    private readonly poll: boolean,
+    private readonly handlers: WatchHandlers,
+  ) {
+    this.folder = resolve(folder);
+    this.parent = watchParent(dirname(this.folder), {
+      depth: 0,
+      ignoreInitial: true,
+      usePolling: poll,
+      interval: POLL_MS,
+      ignored: path => path !== dirname(this.folder) && path !== this.folder,
+    });
+    this.parent.on('addDir', path => path === this.folder && this.attach());
+    this.parent.on('unlinkDir', path => path === this.folder && this.detach());
+    // A parent that cannot be watched costs only the notice of the folder's return: the list finds it.
+    this.parent.on('error', () => {});
+    this.relist = setInterval(() => void this.list(), poll ? POLL_MS : RELIST_MS);
+    this.attach();
+  }
+
+  async close(): Promise<void> {
+    this.closed = true;
+    clearInterval(this.relist);
+    clearTimeout(this.timer);
+    this.handle?.close();
+    await this.parent.close();
+  }
+
+  private attach(): void {
+    this.handle?.close();
+    this.handle = undefined;
+    if (!this.poll) {
+      try {
+        this.handle = watchFolder(this.folder, (_, name) => name !== null && this.notice(name));
+        this.handle.on('error', () => this.detach());
+      } catch {
+        // Not there yet, or no watches left: the list goes on.
+      }
+    }
+    void this.list();
+  }
+
+  private detach(): void {
+    this.handle?.close();
+    this.handle = undefined;
+    this.handlers.onFolder(false);
+  }
+
+  private notice(name: string): void {
+    if (UNFINISHED.test(name) || this.closed) return;
+    this.waiting.add(name);
+    this.schedule(SETTLE_MS);
+  }
+
+  /** Lists the folder and notices every file that is new or has changed, oldest first. */
+  private async list(): Promise<void> {
+    let names: string[];
+    try {
+      names = await readdir(this.folder);
+    } catch {
+      this.handlers.onFolder(false);
+      return;
+    }
+    this.handlers.onFolder(true);
+    const fresh: { name: string; time: number }[] = [];
+    for (const name of names) {
+      if (UNFINISHED.test(name)) continue;
+      const status = await stat(join(this.folder, name)).catch(() => undefined);
+      if (status === undefined || status.isDirectory()) continue;
+      if (this.done.get(name) !== keyOf(status.size, status.mtimeMs))
+        fresh.push({ name, time: status.mtimeMs });
+    }
+    fresh.sort((a, b) => a.time - b.time || (a.name < b.name ? -1 : 1));
+    for (const { name } of fresh) this.notice(name);
+    if (fresh.length === 0 && this.waiting.size === 0 && !this.working) this.handlers.onIdle();
+  }
+
+  private schedule(delay_ms: number): void {
+    if (this.timer !== undefined || this.working || this.closed) return;
+    this.timer = setTimeout(() => {
+      this.timer = undefined;
+      void this.work();
+    }, delay_ms);
+  }
+
+  private async work(): Promise<void> {
+    this.working = true;
+    for (const name of [...this.waiting]) {
+      if (this.closed) return;
+      if (await this.tryFile(name)) this.waiting.delete(name);
+    }
+    this.working = false;
+    if (this.waiting.size > 0) this.schedule(RECHECK_MS);
+    else this.handlers.onIdle();
+  }
+
+  /** True when nothing more is to be done about the file for now. */
+  private async tryFile(name: string): Promise<boolean> {
+    const path = join(this.folder, basename(name));
+    const seen = await glance(path);
+    if (seen === undefined) {
+      this.done.delete(name);
+      return true;
+    }
+    if (isRefusal(seen)) return this.refuse(name, seen, seen.code);
+    const key = keyOf(seen.bytes, seen.modified_ms);
+    if (this.done.get(name) === key) return true;
+    if (!isComplete(seen, Date.now())) return false;
+    const bytes = await readWhole(path);
+    if (bytes === undefined) return true;
+    if (isRefusal(bytes)) return this.refuse(name, bytes, key);
+    this.done.set(name, key);
+    await this.handlers.onFile(name, bytes);
+    return true;
+  }
+
+  private refuse(name: string, refusal: Refusal, key: string): true {
+    if (this.done.get(name) !== key) this.handlers.onRefused(name, refusal);
+    this.done.set(name, key);
+    return true;
+  }
+}
+
+function keyOf(bytes: number, modified_ms: number): string {
+  return `${bytes} ${modified_ms}`;
+}

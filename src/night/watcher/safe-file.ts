@@ -1,0 +1,70 @@
+import { constants } from 'node:fs';
+import { type FileHandle, open } from 'node:fs/promises';
+import { LIMITS } from '../../catalogue/limits.js';
+import type { ProblemCode } from '../../catalogue/problem-codes.js';
+import type { Glance } from './completeness.js';
+
+/** Why a file was not read. */
+export interface Refusal {
+  readonly code: ProblemCode;
+  readonly seen: string;
+}
+
+/** Looks at a file: size, time, last byte. Undefined when it is gone. */
+export async function glance(path: string): Promise<Glance | Refusal | undefined> {
+  return await withRegularFile(path, async (file, status) => {
+    const last = Buffer.alloc(1);
+    if (status.size > 0) await file.read(last, 0, 1, status.size - 1);
+    return {
+      bytes: status.size,
+      modified_ms: status.mtimeMs,
+      lastByte: status.size > 0 ? last[0] : undefined,
+    };
+  });
+}
+
+/** Reads a whole file, up to the limit. Undefined when it is gone. */
+export async function readWhole(path: string): Promise<Uint8Array | Refusal | undefined> {
+  return await withRegularFile<Uint8Array | Refusal>(path, async (file, status) => {
+    if (status.size > LIMITS.file_bytes) {
+      return {
+        code: 'too-large',
+        seen: `the file has ${status.size} bytes, at most ${LIMITS.file_bytes} are read`,
+      };
+    }
+    const bytes = new Uint8Array(status.size);
+    let filled = 0;
+    while (filled < bytes.length) {
+      const { bytesRead } = await file.read(bytes, filled, bytes.length - filled, filled);
+      if (bytesRead === 0) break;
+      filled += bytesRead;
+    }
+    return bytes.subarray(0, filled);
+  });
+}
+
+/** Opens without waiting, so that a pipe or device cannot hang the night, and goes on with regular files only. */
+async function withRegularFile<T>(
+  path: string,
+  use: (file: FileHandle, status: { size: number; mtimeMs: number }) => Promise<T>,
+): Promise<T | Refusal | undefined> {
+  let file: FileHandle | undefined;
+  try {
+    file = await open(path, constants.O_RDONLY | constants.O_NONBLOCK);
+    const status = await file.stat();
+    if (!status.isFile()) return { code: 'not-regular', seen: 'this is a pipe, device, socket or folder' };
+    return await use(file, status);
+  } catch (error) {
+    const { code } = error as NodeJS.ErrnoException;
+    if (code === 'ENOENT') return undefined;
+    if (code === 'ENXIO' || code === 'ELOOP')
+      return { code: 'not-regular', seen: 'this is a socket or a loop of links' };
+    return { code: 'unreadable', seen: `it could not be opened (${code ?? 'unknown error'})` };
+  } finally {
+    await file?.close();
+  }
+}
+
+export function isRefusal(value: unknown): value is Refusal {
+  return typeof value === 'object' && value !== null && 'code' in value && 'seen' in value;
+}
