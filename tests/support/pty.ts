@@ -1,0 +1,95 @@
+import pty from '@lydell/node-pty';
+import xterm from '@xterm/headless';
+
+export interface PtyOptions {
+  readonly columns?: number;
+  readonly rows?: number;
+  readonly env?: Readonly<Record<string, string | undefined>>;
+}
+
+/** A real program in a real pseudo-terminal, its screen read through a terminal emulator. */
+export class PtySession {
+  readonly terminal: InstanceType<typeof xterm.Terminal>;
+  readonly exit: Promise<{ exitCode: number; signal?: number | undefined }>;
+  bytes = 0;
+  /** Everything the program wrote. */
+  raw = '';
+  private readonly process: pty.IPty;
+  private readonly waiters = new Set<() => void>();
+  private ended = false;
+
+  constructor(
+    command: string,
+    args: readonly string[],
+    { columns = 80, rows = 24, env = {} }: PtyOptions = {},
+  ) {
+    const inherited = { ...process.env, CI: undefined, NO_COLOR: undefined, FORCE_COLOR: undefined };
+    const wanted = { ...inherited, TERM: 'xterm-256color', LANG: 'C.UTF-8', LC_ALL: undefined, ...env };
+    const given = Object.entries(wanted).filter((entry): entry is [string, string] => entry[1] !== undefined);
+    this.terminal = new xterm.Terminal({ cols: columns, rows, allowProposedApi: true, scrollback: 200 });
+    this.process = pty.spawn(command, [...args], { cols: columns, rows, env: Object.fromEntries(given) });
+    this.terminal.onData(data => !this.ended && this.process.write(data));
+    this.process.onData(data => {
+      this.bytes += Buffer.byteLength(data);
+      this.raw += data;
+      this.terminal.write(data, () => {
+        for (const waiter of this.waiters) waiter();
+      });
+    });
+    this.exit = new Promise(resolve => {
+      this.process.onExit(result => {
+        this.ended = true;
+        resolve(result);
+      });
+    });
+  }
+
+  get pid(): number {
+    return this.process.pid;
+  }
+
+  type(keys: string): void {
+    this.process.write(keys);
+  }
+
+  resize(columns: number, rows: number): void {
+    this.terminal.resize(columns, rows);
+    this.process.resize(columns, rows);
+  }
+
+  kill(signal: string): void {
+    if (!this.ended) this.process.kill(signal);
+  }
+
+  screen(): string {
+    const buffer = this.terminal.buffer.active;
+    const lines = Array.from(
+      { length: this.terminal.rows },
+      (_, y) => buffer.getLine(buffer.baseY + y)?.translateToString(true) ?? '',
+    );
+    return lines.join('\n');
+  }
+
+  get onAlternateScreen(): boolean {
+    return this.terminal.buffer.active.type === 'alternate';
+  }
+
+  /** Waits until the screen shows something. */
+  async shows(what: string | RegExp, patience_ms = 15_000): Promise<void> {
+    const shown = () => (typeof what === 'string' ? this.screen().includes(what) : what.test(this.screen()));
+    if (shown()) return;
+    await new Promise<void>((resolve, reject) => {
+      const timer = setTimeout(() => {
+        this.waiters.delete(check);
+        reject(new Error(`the screen never showed ${what}:\n${this.screen()}`));
+      }, patience_ms);
+      const check = () => {
+        if (!shown()) return;
+        clearTimeout(timer);
+        this.waiters.delete(check);
+        resolve();
+      };
+      this.waiters.add(check);
+    });
+  }
+}
