@@ -12,6 +12,7 @@ interface Step {
 export class NightPlayer {
   private readonly steps: readonly Step[];
   private next = 0;
+  private lastStep_ms = 0;
   private timer: NodeJS.Timeout | undefined;
 
   constructor(
@@ -31,6 +32,11 @@ export class NightPlayer {
     return this.next >= this.steps.length;
   }
 
+  /** Time since the last file was written; 0 while there are more. */
+  finishedFor_ms(): number {
+    return this.finished ? Date.now() - this.lastStep_ms : 0;
+  }
+
   start(): void {
     this.play();
   }
@@ -44,6 +50,7 @@ export class NightPlayer {
     const now = Date.now();
     while (this.next < this.steps.length && this.worldTime(this.steps[this.next].at_ms) <= now) {
       this.steps[this.next++].act();
+      this.lastStep_ms = now;
     }
     if (this.finished) return;
     this.timer = setTimeout(

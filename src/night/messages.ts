@@ -15,12 +15,13 @@ export type ToWorker =
   | { readonly kind: 'detail'; readonly star: number }
   /** The minute has changed: windows and start-by move. */
   | { readonly kind: 'refresh' }
-  | { readonly kind: 'stop' };
+  /** List the folder now. */
+  | { readonly kind: 'look' };
 
 /** From the worker to the main thread. */
 export type FromWorker =
   | { readonly kind: 'view'; readonly view: NightView }
   | { readonly kind: 'detail'; readonly detail: StarDetail }
   | { readonly kind: 'folder'; readonly present: boolean }
-  /** How many files have been dealt with so far, and that none waits. */
+  /** How many files (by name) have been dealt with so far, and that none waits. */
   | { readonly kind: 'idle'; readonly files: number };

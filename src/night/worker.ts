@@ -17,7 +17,7 @@ function run(start: WorkerStart, port: NonNullable<typeof parentPort>): void {
   const clock = makeClock(start.clock);
   const engine = new NightEngine(start.profile);
   const maker = new ViewMaker(engine, new FollowUpDesk(engine));
-  let files = 0;
+  const files = new Set<string>();
   let pending: NodeJS.Timeout | undefined;
   let lastView_ms = 0;
   let present: boolean | undefined;
@@ -36,14 +36,14 @@ function run(start: WorkerStart, port: NonNullable<typeof parentPort>): void {
   const watcher = new FolderWatcher(start.folder, start.poll, {
     onFile: async (name, bytes) => {
       engine.absorb(name, bytes);
-      files++;
+      files.add(name);
       viewSoon();
       // Between two files the port gets its turn: questions about a star are not kept waiting.
       await new Promise(resolve => setImmediate(resolve));
     },
     onRefused: (name, { code, seen }) => {
       engine.problems.push(makeProblem(code, safeText(name), 0, seen));
-      files++;
+      files.add(name);
       viewSoon();
     },
     onFolder: now => {
@@ -55,7 +55,7 @@ function run(start: WorkerStart, port: NonNullable<typeof parentPort>): void {
         clearTimeout(pending);
         sendView();
       }
-      post({ kind: 'idle', files });
+      post({ kind: 'idle', files: files.size });
     },
   });
 
@@ -69,9 +69,8 @@ function run(start: WorkerStart, port: NonNullable<typeof parentPort>): void {
       case 'refresh':
         viewSoon();
         break;
-      case 'stop':
-        clearTimeout(pending);
-        void watcher.close().then(() => port.close());
+      case 'look':
+        watcher.look();
         break;
     }
   });

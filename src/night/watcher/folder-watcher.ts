@@ -61,6 +61,11 @@ export class FolderWatcher {
     this.attach();
   }
 
+  /** Lists the folder now instead of waiting for the next time. */
+  look(): void {
+    void this.list();
+  }
+
   async close(): Promise<void> {
     this.closed = true;
     clearInterval(this.relist);
