@@ -68,6 +68,7 @@ export function makeDemo(): Map<string, string> {
     json({
       about: 'Invented stars hidden in the demo night, and the flag that should find each.',
       stars: hidden.map(({ kind, flag, star }) => ({
+        id: identifier(stars.indexOf(star)),
         kind,
         flag,
         ra_deg: Number(star.ra_deg.toFixed(5)),
@@ -95,7 +96,7 @@ function astrometryTable(stars: readonly DemoStar[], random: Random): string {
   stars.forEach((star, i) => {
     const sigma = star.V < 14.5 ? 0.018 : 0.018 * 10 ** (0.21 * (star.V - 14.5));
     const cells = [
-      `IC1-${String(i + 1).padStart(4, '0')}`,
+      identifier(i),
       star.ra_deg.toFixed(6),
       star.dec_deg.toFixed(6),
       (1000 / star.distance_pc + random.normal(0, sigma)).toFixed(3),
@@ -106,6 +107,10 @@ function astrometryTable(stars: readonly DemoStar[], random: Random): string {
     lines.push(cells.join(','));
   });
   return `${lines.join('\n')}\n`;
+}
+
+function identifier(place: number): string {
+  return `IC1-${String(place + 1).padStart(4, '0')}`;
 }
 
 /** What a reduction leaves behind when it dies: a good beginning, half a row, then rubbish. */

@@ -36,6 +36,8 @@ export class NightEngine {
   readonly flags: FlagBook;
   model: ClassModel;
   inputs: StarInputs;
+  /** Positions as they were when the inputs were read. */
+  positions: { readonly ra_deg: Float64Array; readonly dec_deg: Float64Array };
   odds: OddsColumns = makeOddsColumns(1024);
   readonly problems: Problem[] = [];
   /** Files whose content had been read before. */
@@ -50,6 +52,7 @@ export class NightEngine {
     this.flags = new FlagBook(profile.flags);
     this.model = this.modelFor();
     this.inputs = this.readInputs();
+    this.positions = this.readPositions();
   }
 
   /** Frames in order of time; plain catalogues first. */
@@ -118,6 +121,7 @@ export class NightEngine {
   private follow(frame: number, touched: Iterable<number>): void {
     this.ensureRoom();
     this.inputs = this.readInputs();
+    this.positions = this.readPositions();
     const axes = chooseAxes(
       this.catalogue.bands,
       this.profile.bands.map(({ band }) => band),
@@ -151,6 +155,10 @@ export class NightEngine {
       parallaxSigma_mas: catalogue.parallax_sigma_mas,
       reddening_EBV: catalogue.reddening_EBV,
     };
+  }
+
+  private readPositions() {
+    return { ra_deg: this.catalogue.ra_deg, dec_deg: this.catalogue.dec_deg };
   }
 
   private ensureRoom(): void {

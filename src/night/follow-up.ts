@@ -30,8 +30,8 @@ export class FollowUpDesk {
   }
 
   of(star: number, now_ms: number): FollowUp {
-    const { catalogue, profile } = this.engine;
-    const [ra, dec] = [catalogue.ra_deg[star], catalogue.dec_deg[star]];
+    const { positions, profile } = this.engine;
+    const [ra, dec] = [positions.ra_deg[star], positions.dec_deg[star]];
     const any = this.sky.windowOf(ra, dec, now_ms, 0);
     // A star that is not up yet is worked out for the airmass at which it may be begun.
     const up = any.upFrom_ms <= now_ms && any.airmassNow <= profile.site.maxAirmass;

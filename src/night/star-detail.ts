@@ -24,8 +24,8 @@ export function starDetail(
   return {
     star,
     id: catalogue.ids[star],
-    ra_deg: catalogue.ra_deg[star],
-    dec_deg: catalogue.dec_deg[star],
+    ra_deg: engine.positions.ra_deg[star],
+    dec_deg: engine.positions.dec_deg[star],
     spectralType: spectralTypeText(odds.odds, index, odds.subtype[star], odds.teff_K[star]),
     luminosityClass: CLASSES[odds.classIndex[star]],
     odds: oddsOf(odds.odds, star),

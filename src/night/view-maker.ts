@@ -52,8 +52,8 @@ export class ViewMaker {
     return {
       count,
       ids: catalogue.ids.slice(),
-      ra_deg: catalogue.ra_deg.slice(),
-      dec_deg: catalogue.dec_deg.slice(),
+      ra_deg: catalogue.ra_deg,
+      dec_deg: catalogue.dec_deg,
       mag: Float32Array.from({ length: count }, (_, star) => magnitudes(axis, star)),
       colour: Float32Array.from(
         { length: count },

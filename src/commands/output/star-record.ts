@@ -77,8 +77,8 @@ export class RecordMaker {
     const type = known ? temperatureTypeText(starClass, odds.subtype[star], odds.teff_K[star]) : '';
     return {
       id: catalogue.ids[star],
-      ra_deg: rounded(catalogue.ra_deg[star], 6),
-      dec_deg: rounded(catalogue.dec_deg[star], 6),
+      ra_deg: rounded(engine.positions.ra_deg[star], 6),
+      dec_deg: rounded(engine.positions.dec_deg[star], 6),
       mags: this.magnitudes(star),
       abs_mag: {
         band: model.axes.band,
