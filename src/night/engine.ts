@@ -84,14 +84,14 @@ export class NightEngine {
     return outcomes;
   }
 
-  private take(name: string, bytes: Uint8Array): FileOutcome & { readonly stars: Iterable<number> } {
+  private take(name: string, bytes: Uint8Array): FileOutcome & { readonly stars: Uint32Array } {
     const { frame, problems } = readFrame(name, bytes, this.profile.input);
     this.problems.push(...problems);
-    if (frame === undefined) return { name, kind: 'refused', frame: -1, problems, stars: [] };
+    if (frame === undefined) return { name, kind: 'refused', frame: -1, problems, stars: NO_STARS };
     const fate = this.log.decide(name, bytes);
     if (fate.kind === 'known') {
       this.duplicates++;
-      return { name, kind: 'known', frame: -1, problems, stars: [] };
+      return { name, kind: 'known', frame: -1, problems, stars: NO_STARS };
     }
     const stars = this.catalogue.absorb(frame, fate.index);
     const { facts } = frame;
@@ -118,7 +118,7 @@ export class NightEngine {
   }
 
   /** Classifies and judges the stars that a frame touched. */
-  private follow(frame: number, touched: Iterable<number>): void {
+  private follow(frame: number, touched: Uint32Array): void {
     this.ensureRoom();
     this.inputs = this.readInputs();
     this.positions = this.readPositions();
@@ -168,6 +168,8 @@ export class NightEngine {
   }
 }
 
-function* everyStar(count: number): Iterable<number> {
-  for (let star = 0; star < count; star++) yield star;
+const NO_STARS = new Uint32Array(0);
+
+function everyStar(count: number): Uint32Array {
+  return Uint32Array.from({ length: count }, (_, star) => star);
 }

@@ -32,15 +32,16 @@ export class FollowUpDesk {
   of(star: number, now_ms: number): FollowUp {
     const { positions, profile } = this.engine;
     const [ra, dec] = [positions.ra_deg[star], positions.dec_deg[star]];
-    const any = this.sky.windowOf(ra, dec, now_ms, 0);
+    const sky = this.sky.at(now_ms);
+    const tonight = sky.follow(ra, dec, now_ms);
     // A star that is not up yet is worked out for the airmass at which it may be begun.
-    const up = any.upFrom_ms <= now_ms && any.airmassNow <= profile.site.maxAirmass;
+    const up = tonight.spans.some(([from, until]) => from <= now_ms && now_ms < until);
     const exposures = this.adviser.suggest(this.posterior().predicted(star), {
       ...this.conditions(),
-      airmass: up ? any.airmassNow : profile.site.maxAirmass,
+      airmass: up ? tonight.airmassNow : profile.site.maxAirmass,
     });
     const first = exposures.find(exposure => exposure.possible);
-    return { exposures, window: this.sky.windowOf(ra, dec, now_ms, first?.total_s ?? 0) };
+    return { exposures, window: sky.windowFor(tonight, first?.total_s ?? 0) };
   }
 
   /** Seeing at the zenith from the newest frames, the profile's until there are any. */

@@ -1,7 +1,7 @@
 import type { Profile } from '../follow/settings.js';
 import { Ephemeris } from '../follow/sky/ephemeris.js';
 import { nightOf } from '../follow/sky/night-of.js';
-import { NightSky, type TargetWindow } from '../follow/sky/window.js';
+import { NightSky } from '../follow/sky/window.js';
 
 /** The sky over the site, kept for the running night and made anew for the next. */
 export class SkyNow {
@@ -22,9 +22,5 @@ export class SkyNow {
       nightOf(this.ephemeris, this.profile.site, now_ms),
     );
     return this.sky;
-  }
-
-  windowOf(ra_deg: number, dec_deg: number, now_ms: number, wall_s: number): TargetWindow {
-    return this.at(now_ms).windowOf(ra_deg, dec_deg, now_ms, wall_s);
   }
 }

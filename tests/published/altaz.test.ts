@@ -31,7 +31,7 @@ describe('altitude, azimuth, Sun and Moon against Astropy', () => {
       expect(Math.abs(ephemeris.sunAltitude_deg(time_ms) - row.number('sun_alt_deg'))).toBeLessThan(0.003);
       expect(Math.abs(ephemeris.moonIllumination(time_ms) - row.number('moon_illum'))).toBeLessThan(0.0003);
       const moon = ephemeris.moonDirection(time_ms);
-      const star = ephemeris.withAberration(direction, time_ms);
+      const star = ephemeris.aberrationAt(time_ms)(direction);
       const separation =
         (Math.acos(moon[0] * star[0] + moon[1] * star[1] + moon[2] * star[2]) * 180) / Math.PI;
       // The library's apparent Moon and the star are both of date and aberrated: compare to 0.02 degrees.

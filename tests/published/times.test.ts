@@ -83,10 +83,12 @@ describe('windows above 30 degrees against the same crossings', () => {
       checked++;
       const sky = new NightSky(ephemeris, site, night);
       const rises = row.text('event').startsWith('target_rises');
-      const around = sky.windowOf(
-        row.number('target_ra_icrs_deg'),
-        row.number('target_dec_icrs_deg'),
-        rises ? crossing - 30_000 : crossing - 120_000,
+      const around = sky.windowFor(
+        sky.follow(
+          row.number('target_ra_icrs_deg'),
+          row.number('target_dec_icrs_deg'),
+          rises ? crossing - 30_000 : crossing - 120_000,
+        ),
         0,
       );
       const edge = rises ? around.upFrom_ms : around.upUntil_ms;

@@ -22,6 +22,9 @@ import type { Conditions } from './suggestion.js';
 /** Peak pixels are worked out for seeing that gets this much better meanwhile. */
 const BETTER_SEEING = 0.8;
 
+const RADIUS_FWHM = bestRadius_fwhm(SMALL_TELESCOPE_BETA);
+const IN_APERTURE = enclosedFraction(RADIUS_FWHM, SMALL_TELESCOPE_BETA);
+
 /** Magnitude of 1 e-/s above the atmosphere in a band of this telescope. */
 export function bandZeroPoint_mag(telescope: Telescope, band: BandSettings, passband: Passband): number {
   return zeroPoint_mag(
@@ -59,17 +62,16 @@ export function imagerRates(
     90 - altitudeOfAirmass_deg(conditions.airmass),
   );
   const background = skyRate_ePerSPerPixel(sky, zeroPoint, detector.pixel_arcsec ** 2) + detector.dark_ePerS;
-  const radius_fwhm = bestRadius_fwhm(SMALL_TELESCOPE_BETA);
   const pixel_fwhm = detector.pixel_arcsec / fwhm_arcsec;
   return {
-    signal_ePerS: star_ePerS * enclosedFraction(radius_fwhm, SMALL_TELESCOPE_BETA),
+    signal_ePerS: star_ePerS * IN_APERTURE,
     noise: {
-      pixels: (Math.PI * radius_fwhm ** 2) / pixel_fwhm ** 2,
+      pixels: (Math.PI * RADIUS_FWHM ** 2) / pixel_fwhm ** 2,
       background_ePerSPerPixel: background,
       readNoise_e: detector.readNoise_e,
       gain_ePerAdu: detector.gain_ePerAdu,
       scintillation_s: scintillation_s(telescope.aperture_m, conditions.airmass, conditions.siteHeight_m),
     },
-    peak_ePerS: star_ePerS * peakPixelFraction(pixel_fwhm / BETTER_SEEING, SMALL_TELESCOPE_BETA) + background,
+    peak_ePerS: star_ePerS * peakPixelFraction(pixel_fwhm / BETTER_SEEING, SMALL_TELESCOPE_BETA),
   };
 }

@@ -10,8 +10,14 @@ import type { Detector, Setup } from '../settings.js';
 export interface Rates {
   readonly signal_ePerS: number;
   readonly noise: Noise;
-  /** Electrons per second in the brightest pixel, sky included. */
+  /** Electrons per second of the star in its brightest pixel, without the background. */
   readonly peak_ePerS: number;
+}
+
+/** The same for a star brighter or fainter by some magnitudes. */
+export function fainterBy(rates: Rates, shift_mag: number): Rates {
+  const factor = 10 ** (-0.4 * shift_mag);
+  return { ...rates, signal_ePerS: rates.signal_ePerS * factor, peak_ePerS: rates.peak_ePerS * factor };
 }
 
 /** Number and length of the exposures, or the words that say why not. */
@@ -38,7 +44,8 @@ export function pixelLimit_e(detector: Detector): number {
 
 /** Solves for the setup's S/N, splits by saturation and the longest exposure, and rounds to tidy times. */
 export function planExposure(setup: Setup, rates: Rates): PlannedExposure {
-  const saturation_s = (SAFE_SHARE * pixelLimit_e(setup.detector)) / rates.peak_ePerS;
+  const saturation_s =
+    (SAFE_SHARE * pixelLimit_e(setup.detector)) / (rates.peak_ePerS + rates.noise.background_ePerSPerPixel);
   if (saturation_s < SHORTEST_S) {
     return impossible(`too bright: the peak pixel fills in ${(saturation_s / SAFE_SHARE).toPrecision(1)} s`);
   }

@@ -68,7 +68,6 @@ export function spectrographRates(
       scintillation_s: 0,
     },
     // Along the slit the image is a line one pixel wide in wavelength: its brightest row.
-    peak_ePerS:
-      perPixel_ePerS * slitFraction(detector.pixel_arcsec / fwhm_arcsec, SMALL_TELESCOPE_BETA) + background,
+    peak_ePerS: perPixel_ePerS * slitFraction(detector.pixel_arcsec / fwhm_arcsec, SMALL_TELESCOPE_BETA),
   };
 }

@@ -3,7 +3,7 @@ import type { PredictedMagnitudes } from '../../science/odds/index.js';
 import { type Passband, photonFluxAt, readPassbands } from '../../science/passbands.js';
 import type { Profile, Setup } from '../settings.js';
 import { imagerRates } from './imager.js';
-import { type PlannedExposure, planExposure, type Rates } from './plan-exposure.js';
+import { fainterBy, type PlannedExposure, planExposure, type Rates } from './plan-exposure.js';
 import { type KnownBands, spectrographRates } from './spectrograph.js';
 import type { Conditions, ExposureSuggestion } from './suggestion.js';
 
@@ -28,14 +28,9 @@ export class ExposureAdviser {
   suggestFor(setup: Setup, predicted: PredictedMagnitudes, conditions: Conditions): ExposureSuggestion {
     const index = BAND_INDEX[setup.kind === 'imager' ? setup.band : this.bandNear(setup.wavelength_nm)];
     const sigma = predicted.sigma_mag[index];
-    const shifted = (shift: number): PlannedExposure => {
-      const rates = this.rates(
-        setup,
-        predicted.mag.map(mag => mag + shift),
-        conditions,
-      );
-      return rates === undefined ? UNKNOWN : planExposure(setup, rates);
-    };
+    const rates = this.rates(setup, predicted.mag, conditions);
+    const shifted = (shift: number): PlannedExposure =>
+      rates === undefined ? UNKNOWN : planExposure(setup, fainterBy(rates, shift));
     const middle = shifted(0);
     return {
       setup: setup.name,

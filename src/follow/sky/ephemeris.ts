@@ -38,7 +38,7 @@ export class Ephemeris {
   /** Airless altitude and azimuth (from north through east) of a star, degrees. */
   starPlace(direction: Direction, time_ms: number): { altitude_deg: number; azimuth_deg: number } {
     const { rot } = Astronomy.Rotation_EQJ_HOR(timeOf(time_ms), this.observer);
-    const [x, y, z] = this.withAberration(direction, time_ms);
+    const [x, y, z] = this.aberrationAt(time_ms)(direction);
     const north = rot[0][0] * x + rot[1][0] * y + rot[2][0] * z;
     const west = rot[0][1] * x + rot[1][1] * y + rot[2][1] * z;
     const up = rot[0][2] * x + rot[1][2] * y + rot[2][2] * z;
@@ -48,16 +48,16 @@ export class Ephemeris {
     };
   }
 
-  /** Direction as seen from the moving Earth: the light of a star comes from up to 20.5 arcsec ahead. */
-  withAberration(direction: Direction, time_ms: number): Direction {
+  /** Turns directions into those seen from the moving Earth: light comes from up to 20.5 arcsec ahead. */
+  aberrationAt(time_ms: number): (direction: Direction) => Direction {
     const { vx, vy, vz } = Astronomy.BaryState(Astronomy.Body.Earth, timeOf(time_ms));
-    const moved = [
-      direction[0] + vx / LIGHT_AU_PER_DAY,
-      direction[1] + vy / LIGHT_AU_PER_DAY,
-      direction[2] + vz / LIGHT_AU_PER_DAY,
-    ] as const;
-    const length = Math.hypot(...moved);
-    return [moved[0] / length, moved[1] / length, moved[2] / length];
+    return ([a, b, c]) => {
+      const x = a + vx / LIGHT_AU_PER_DAY;
+      const y = b + vy / LIGHT_AU_PER_DAY;
+      const z = c + vz / LIGHT_AU_PER_DAY;
+      const length = Math.hypot(x, y, z);
+      return [x / length, y / length, z / length];
+    };
   }
 
   sunAltitude_deg(time_ms: number): number {

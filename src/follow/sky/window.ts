@@ -19,6 +19,21 @@ export interface TargetWindow {
   readonly blockedBy: string;
 }
 
+/** A star's night: where it stands now, and the stretches in which it can be observed. */
+export interface StarTonight {
+  readonly now_ms: number;
+  readonly altitudeNow_deg: number;
+  readonly airmassNow: number;
+  readonly spans: readonly (readonly [number, number])[];
+  readonly whyNever: () => string;
+}
+
+interface Moment {
+  readonly now_ms: number;
+  readonly zenith: Direction;
+  readonly toApparent: (direction: Direction) => Direction;
+}
+
 /**
  * The sky of one night on a grid of five minutes, made once and used for every star: quadratic interpolation
  * in it is good to an arcsecond, far below what a window needs.
@@ -29,6 +44,7 @@ export class NightSky {
   private readonly moon: readonly Direction[];
   private readonly moonUp: readonly boolean[];
   private readonly limit_deg: number;
+  private moment: Moment | undefined;
 
   constructor(
     private readonly ephemeris: Ephemeris,
@@ -47,18 +63,30 @@ export class NightSky {
     this.limit_deg = Math.max(site.minAltitude_deg, altitudeOfAirmass_deg(site.maxAirmass));
   }
 
-  /** The window of a star for an observation of the given wall time (0: any). */
-  windowOf(ra_deg: number, dec_deg: number, now_ms: number, wall_s: number): TargetWindow {
-    const direction = this.ephemeris.withAberration(directionOf(ra_deg, dec_deg), now_ms);
-    const altitudeNow_deg = altitudeIn(this.ephemeris.zenithRow(now_ms), direction);
-    const place = { altitudeNow_deg, airmassNow: airmass(altitudeNow_deg) };
+  /** How a star stands tonight, whatever is done with it. */
+  follow(ra_deg: number, dec_deg: number, now_ms: number): StarTonight {
+    const moment = this.momentOf(now_ms);
+    const direction = moment.toApparent(directionOf(ra_deg, dec_deg));
+    const altitudeNow_deg = altitudeIn(moment.zenith, direction);
     const altitudes = this.zenith.map(row => altitudeIn(row, direction) - this.limit_deg);
     const clear = this.moon.map((moon, i) =>
       this.moonUp[i] ? separation_deg(moon, direction) - this.site.moonDistance_deg : 1,
     );
-    const spans = this.spans(altitudes, clear).filter(([, until]) => until > now_ms);
+    return {
+      now_ms,
+      altitudeNow_deg,
+      airmassNow: airmass(altitudeNow_deg),
+      spans: this.spans(altitudes, clear).filter(([, until]) => until > now_ms),
+      whyNever: () => this.whyNever(altitudes, clear, now_ms),
+    };
+  }
+
+  /** The window of a star for an observation of the given wall time (0: any). */
+  windowFor(star: StarTonight, wall_s: number): TargetWindow {
+    const { now_ms, altitudeNow_deg, airmassNow, spans } = star;
+    const place = { altitudeNow_deg, airmassNow };
     const span = spans.find(([from, until]) => until - Math.max(from, now_ms) >= wall_s * 1000) ?? spans[0];
-    if (span === undefined) return { ...place, ...NEVER, blockedBy: this.whyNever(altitudes, clear, now_ms) };
+    if (span === undefined) return { ...place, ...NEVER, blockedBy: star.whyNever() };
     const [upFrom_ms, upUntil_ms] = span;
     const startBy = upUntil_ms - wall_s * 1000;
     const fits = startBy >= Math.max(upFrom_ms, now_ms);
@@ -69,6 +97,18 @@ export class NightSky {
       startBy_ms: fits ? startBy : Number.NaN,
       blockedBy: fits ? '' : this.whyTooShort(upFrom_ms, upUntil_ms, now_ms, wall_s),
     };
+  }
+
+  /** What is the same for all stars at one time, kept until the time changes. */
+  private momentOf(now_ms: number): Moment {
+    if (this.moment?.now_ms !== now_ms) {
+      this.moment = {
+        now_ms,
+        zenith: this.ephemeris.zenithRow(now_ms),
+        toApparent: this.ephemeris.aberrationAt(now_ms),
+      };
+    }
+    return this.moment;
   }
 
   /** Stretches of the night in which both values are positive. */

@@ -1,0 +1,162 @@
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join, resolve } from 'node:path';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { CLASSES } from '../../src/science/classes.js';
+import { ROOT, run } from '../support/built.js';
+
+let folder: string;
+const file = (name: string, content: string | Uint8Array) => {
+  writeFileSync(join(folder, name), content);
+  return join(folder, name);
+};
+
+const TABLE = `id,ra,dec,Vmag,e_Vmag,Bmag,e_Bmag,parallax,parallax_error
+sun,30.0,45.0,9.8,0.01,10.45,0.01,10,0.1
+dwarf,30.1,45.0,15.0,0.01,15.05,0.01,20,0.1
+=cmd,30.2,45.0,9.3,0.01,10.35,0.01,2,0.05
+`;
+
+beforeAll(() => {
+  folder = mkdtempSync(join(tmpdir(), 'nightsieve-cli-'));
+});
+afterAll(() => rmSync(folder, { recursive: true, force: true }));
+
+const classify = (...args: string[]) =>
+  run(['classify', ...args, '--profile', 'northern-80cm', '--at', '2026-11-08T22:00Z']);
+
+describe('the command line', () => {
+  it('--version and --help answer', async () => {
+    const { version } = JSON.parse(readFileSync(resolve(ROOT, 'package.json'), 'utf8')) as {
+      version: string;
+    };
+    expect(await run(['--version'])).toEqual({ code: 0, out: `${version}\n`, err: '' });
+    const help = await run(['--help']);
+    expect(help.code).toBe(0);
+    for (const command of ['watch', 'replay', 'classify', 'profile']) expect(help.out).toContain(command);
+  });
+
+  it.each([
+    [['observe'], /unknown command 'observe'/],
+    [['classify'], /missing required argument 'files'/],
+    [['classify', 'x.csv', '--format', 'xml'], /Allowed choices are table, jsonl, csv/],
+    [['classify', 'x.csv', '--at', 'soon'], /a time such as 2026-11-08T22:00Z/],
+    [['replay', 'demo-run', '--speed', '-3'], /a number above 0/],
+    [
+      ['classify', 'x.csv'],
+      /a profile is needed: --profile NAME with one of demo, northern-80cm, southern-2m/,
+    ],
+    [['classify', 'x.csv', '--profile', 'nowhere'], /no such profile/],
+    [['classify', 'x.csv', '--profile', 'demo'], /x\.csv: no such file/],
+    [['watch', 'nowhere', '--profile', 'demo'], /nowhere: no such folder/],
+    [['replay', 'src'], /timetable\.json: cannot be read/],
+  ])('%j is a usage error with words', async (args, words) => {
+    const { code, out, err } = await run(args);
+    expect(code).toBe(2);
+    expect(err).toMatch(words);
+    expect(err).not.toMatch(/^ +at /m);
+    expect(out).toBe('');
+  });
+
+  it('a profile with mistakes is told line by line', async () => {
+    const text = readFileSync(resolve(ROOT, 'profiles/demo.toml'), 'utf8').replace(
+      'latitude_deg = 40.6',
+      'latitude_deg = 406',
+    );
+    const { code, err } = await run(['profile', file('mine.toml', text)]);
+    expect(code).toBe(2);
+    expect(err).toMatch(/mine\.toml:\d+: site\.latitude_deg: saw 406, expected at most 90/);
+  });
+
+  it('profile prints what follows from it', async () => {
+    const { code, out } = await run(['profile', 'southern-2m', '--at', '2026-11-08T03:00Z']);
+    expect(code).toBe(0);
+    expect(out).toMatch(/the profile is in order/);
+    expect(out).toMatch(/^r +\d\d\.\d\d +\d+ +\d\d\.\d$/m);
+    expect(out).toMatch(/sunset to sunrise +\d\d:\d\d to \d\d:\d\d UT/);
+  });
+});
+
+describe('classify', () => {
+  it('prints the jsonl contract, keys in order', async () => {
+    const { code, out, err } = await classify(file('t.csv', TABLE), '--format', 'jsonl');
+    expect([code, err]).toEqual([0, '']);
+    const records = out
+      .trim()
+      .split('\n')
+      .map(line => JSON.parse(line));
+    expect(records).toHaveLength(3);
+    expect(Object.keys(records[0])).toEqual([
+      'id',
+      'ra_deg',
+      'dec_deg',
+      'mags',
+      'abs_mag',
+      'colour',
+      'spectral_type',
+      'luminosity_class',
+      'class',
+      'odds',
+      'teff_K',
+      'teff_sigma_K',
+      'distance_pc',
+      'extinction_AV',
+      'flags',
+      'cautions',
+      'exposures',
+      'window',
+    ]);
+    expect(Object.keys(records[0].odds)).toEqual([...CLASSES]);
+    const [sun, dwarf] = records;
+    expect([sun.luminosity_class, sun.spectral_type[0], sun.flags]).toEqual(['V', 'G', []]);
+    expect(sun.exposures).toEqual([]);
+    expect(dwarf.flags[0]).toMatchObject({ code: 'white-dwarf' });
+    expect(Object.keys(dwarf.exposures[0])).toEqual([
+      'setup',
+      'predicted_mag',
+      'sigma_mag',
+      'count',
+      'each_s',
+      'total_s',
+      'snr',
+      'limited_by',
+    ]);
+    expect(dwarf.window.start_by).toMatch(/^2026-11-09T0\d:\d\d:\d\dZ$/);
+  });
+
+  it('csv: one line a star, formulas disarmed; --flagged: only those', async () => {
+    const path = file('t.csv', TABLE);
+    const { out } = await classify(path, '--format', 'csv');
+    expect(out.split('\n')[3]).toMatch(/^'=cmd,/);
+    const flagged = await classify(path, '--flagged');
+    expect(flagged.out.trim().split('\n')).toHaveLength(2);
+    expect(flagged.out).toMatch(/^dwarf .*white-dwarf: M_V/m);
+  });
+
+  it.each([
+    ['garbage', Buffer.from('\u0007\u0001\u0000 zork'), /^bad: not-a-table/],
+    ['empty', '', /^bad: empty-file/],
+    ['binary', Buffer.from([0x7f, 0x45, 0x4c, 0x46, 2, 1, 1, 0, 0, 0]), /^bad: not-a-table/],
+  ])(
+    'a %s file gives exactly one clear line and exit code 3, and the others are still done',
+    async (_, content, words) => {
+      const { code, out, err } = await classify(
+        file('bad', content),
+        file('good.csv', TABLE),
+        '--format',
+        'jsonl',
+      );
+      expect(code).toBe(3);
+      expect(err.trim().split('\n')).toHaveLength(1);
+      expect(err).toMatch(words);
+      expect(out.trim().split('\n')).toHaveLength(3);
+    },
+  );
+
+  it('a bad row costs itself', async () => {
+    const { code, out, err } = await classify(file('row.csv', `${TABLE}half,a\n`), '--format', 'jsonl');
+    expect(code).toBe(0);
+    expect(err).toMatch(/^row\.csv:5: row-width/);
+    expect(out.trim().split('\n')).toHaveLength(3);
+  });
+});

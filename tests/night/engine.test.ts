@@ -1,0 +1,122 @@
+import { readFileSync } from 'node:fs';
+import { resolve } from 'node:path';
+import { describe, expect, it } from 'vitest';
+import { NightEngine } from '../../src/night/engine.js';
+import { FollowUpDesk } from '../../src/night/follow-up.js';
+import { parseProfile } from '../../src/night/profile/parse.js';
+import { ViewMaker } from '../../src/night/view-maker.js';
+import { ROOT } from '../support/built.js';
+
+const NOW = Date.parse('2026-11-08T22:00:00Z');
+
+const text = readFileSync(resolve(ROOT, 'profiles/northern-80cm.toml'), 'utf8');
+const { profile } = parseProfile(text, 'northern-80cm.toml');
+
+/** A Sun, a white dwarf and a giant: places, parallaxes, then magnitudes. */
+const ASTROMETRY = `id,ra,dec,parallax,parallax_error
+sun,30.0,45.0,10,0.1
+dwarf,30.1,45.0,20,0.1
+giant,30.2,45.0,2,0.05
+`;
+const frame = (filter: string, mags: readonly number[], shift = 0, minute = '00') =>
+  `# FILTER = ${filter}\n# DATE-OBS = 2026-11-08T20:${minute}:00\n# EXPTIME = 60\n# FWHM = 2.0\nra,dec,mag,mag_error\n${mags
+    .map((mag, i) => `${(30 + i / 10).toFixed(1)},45.0,${(mag + shift).toFixed(3)},0.010`)
+    .join('\n')}\n`;
+// V and B-V: 9.8 and 0.65; 15.0 and 0.05; 9.3 and 1.05.
+const V = [9.8, 15.0, 9.3];
+const B = [10.45, 15.05, 10.35];
+
+const bytes = (content: string) => new TextEncoder().encode(content);
+
+function night(...files: readonly (readonly [string, string])[]) {
+  const engine = new NightEngine(profile!);
+  const outcomes = files.map(([name, content]) => engine.absorb(name, bytes(content)));
+  const maker = new ViewMaker(engine, new FollowUpDesk(engine));
+  return { engine, outcomes, maker, view: maker.view(NOW) };
+}
+
+const whole = () => night(['a.csv', ASTROMETRY], ['b.csv', frame('B', B)], ['v.csv', frame('V', V, 0, '05')]);
+
+describe('a night of three stars', () => {
+  it('merges catalogue and frames by position, and classifies', () => {
+    const { view } = whole();
+    expect(view.stars.ids).toEqual(['sun', 'dwarf', 'giant']);
+    expect(view.frames.map(({ name }) => name)).toEqual(['a.csv', 'b.csv', 'v.csv']);
+    expect(view.axes).toEqual({ colour: { blue: 'B', red: 'V' }, band: 'V' });
+    expect(view.stars.absMag[0]).toBeCloseTo(4.7, 1);
+    expect(view.shortlist.map(entry => [entry.id, entry.flags.map(({ code }) => code)])).toEqual([
+      ['dwarf', ['white-dwarf']],
+    ]);
+    expect(view.shortlist[0].flags[0].because).toMatch(
+      /^M_V \+11\.\d at B-V 0\.05 lies \d+\.\d mag below the dwarfs/,
+    );
+  });
+
+  it('gives the same stars in whatever order the files come', () => {
+    const forward = whole().view;
+    const backward = night(
+      ['v.csv', frame('V', V, 0, '05')],
+      ['b.csv', frame('B', B)],
+      ['a.csv', ASTROMETRY],
+    ).view;
+    expect([...backward.stars.absMag].map(mag => mag.toFixed(3))).toEqual(
+      [...forward.stars.absMag].map(mag => mag.toFixed(3)),
+    );
+    expect(backward.shortlist.map(entry => entry.flags[0].code)).toEqual(['white-dwarf']);
+  });
+
+  it('counts the same content once, under whatever name', () => {
+    const { outcomes, view } = night(
+      ['v.csv', frame('V', V)],
+      ['copy.csv', frame('V', V)],
+      ['v.csv', frame('V', V)],
+    );
+    expect(outcomes.map(({ kind }) => kind)).toEqual(['read', 'known', 'known']);
+    expect(view.duplicates).toBe(2);
+    expect(view.stars.readings[0]).toBe(1);
+  });
+
+  it('a re-reduction replaces its earlier frame, and the means follow', () => {
+    const { engine, maker } = whole();
+    expect(engine.absorb('v.csv', bytes(frame('V', V, 0.2, '05'))).kind).toBe('replaced');
+    const { stars } = maker.view(NOW);
+    expect(stars.mag[0]).toBeCloseTo(10.0, 3);
+    expect(stars.readings[0]).toBe(2);
+  });
+
+  it('a refused file costs nothing else', () => {
+    const { engine, maker, view } = whole();
+    const outcome = engine.absorb('bad.csv', bytes('\u0000\u0001rubbish'));
+    expect(outcome.kind).toBe('refused');
+    expect(outcome.problems).toHaveLength(1);
+    expect(maker.view(NOW).shortlist).toEqual(view.shortlist);
+  });
+
+  it('without a colour nothing is flagged, and the caution says what is missing', () => {
+    const { engine, view } = night(['a.csv', ASTROMETRY], ['v.csv', frame('V', V)]);
+    expect(view.shortlist).toEqual([]);
+    expect(engine.flags.of(1)?.cautions.join()).toMatch(/no B-V yet/);
+  });
+
+  it('a star in detail has everything, and its distance is that of its parallax', () => {
+    const { maker } = whole();
+    const detail = maker.detail(1, NOW);
+    expect(detail.luminosityClass).toBe('WD');
+    expect(detail.mags.map(({ band }) => band)).toEqual(['B', 'V']);
+    expect(detail.distance_pc).toBeCloseTo(50, 0);
+    expect(detail.exposures.map(({ setup }) => setup)).toEqual(['V imaging', 'low-res spectrum']);
+    expect(detail.window.startBy_ms).toBeGreaterThan(NOW);
+    expect(detail.lightCurves).toHaveLength(2);
+  });
+
+  it('exposures follow the seeing of the newest frames', () => {
+    const good = whole();
+    const poor = night(
+      ['a.csv', ASTROMETRY],
+      ['b.csv', frame('B', B)],
+      ['v.csv', frame('V', V, 0, '05').replace('FWHM = 2.0', 'FWHM = 5.0')],
+    );
+    const time = (view: typeof good.view) => view.shortlist[0].exposures[1].total_s;
+    expect(time(poor.view)).toBeGreaterThan(time(good.view));
+  });
+});

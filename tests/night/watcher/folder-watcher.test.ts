@@ -1,0 +1,135 @@
+import { execFileSync } from 'node:child_process';
+import {
+  appendFileSync,
+  mkdirSync,
+  mkdtempSync,
+  renameSync,
+  rmSync,
+  unlinkSync,
+  utimesSync,
+  writeFileSync,
+} from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import { isComplete, PATIENCE_MS, QUIET_MS } from '../../../src/night/watcher/completeness.js';
+import { FolderWatcher } from '../../../src/night/watcher/folder-watcher.js';
+
+let parent: string;
+let folder: string;
+let watcher: FolderWatcher | undefined;
+
+beforeEach(() => {
+  parent = mkdtempSync(join(tmpdir(), 'nightsieve-watch-'));
+  folder = join(parent, 'night');
+  mkdirSync(folder);
+});
+
+afterEach(async () => {
+  await watcher?.close();
+  watcher = undefined;
+  rmSync(parent, { recursive: true, force: true });
+});
+
+function start(poll = false) {
+  const files: [string, string][] = [];
+  const refused: [string, string][] = [];
+  const folders: boolean[] = [];
+  watcher = new FolderWatcher(folder, poll, {
+    onFile: (name, bytes) => {
+      files.push([name, Buffer.from(bytes).toString()]);
+    },
+    onRefused: (name, refusal) => refused.push([name, refusal.code]),
+    onFolder: present => folders.push(present),
+    onIdle: () => {},
+  });
+  return { files, refused, folders };
+}
+
+const until = (check: () => void) => vi.waitFor(check, { timeout: 8000, interval: 20 });
+const path = (name: string) => join(folder, name);
+
+describe('FolderWatcher', () => {
+  it('reads what is there before the start, oldest first, hidden and unfinished files left out', async () => {
+    for (const [name, age] of [
+      ['b.csv', 100],
+      ['a.csv', 50],
+      ['.hidden.csv', 40],
+      ['c.csv.tmp', 30],
+      ['d.csv~', 20],
+    ] as const) {
+      writeFileSync(path(name), `${name}\n`);
+      utimesSync(path(name), Date.now() / 1000 - age, Date.now() / 1000 - age);
+    }
+    const { files } = start();
+    await until(() => expect(files.map(([name]) => name)).toEqual(['b.csv', 'a.csv']));
+  });
+
+  it('waits for a slow writer, and reads a file renamed into place', async () => {
+    const { files } = start();
+    writeFileSync(path('slow.csv'), 'ra,dec\n1');
+    await new Promise(resolve => setTimeout(resolve, 300));
+    expect(files).toEqual([]);
+    appendFileSync(path('slow.csv'), ',2\n');
+    writeFileSync(path('atomic.csv.tmp'), 'whole\n');
+    renameSync(path('atomic.csv.tmp'), path('atomic.csv'));
+    await until(() => expect(files).toHaveLength(2));
+    expect(new Map(files).get('slow.csv')).toBe('ra,dec\n1,2\n');
+    expect(new Map(files).get('atomic.csv')).toBe('whole\n');
+  });
+
+  it('reads a file again when it grows, and again when it is rewritten', async () => {
+    const { files } = start();
+    writeFileSync(path('f.csv'), 'one\n');
+    await until(() => expect(files).toHaveLength(1));
+    appendFileSync(path('f.csv'), 'two\n');
+    await until(() => expect(files).toHaveLength(2));
+    writeFileSync(path('f.csv'), 'new\n');
+    await until(() => expect(files).toHaveLength(3));
+    expect(files.map(([, text]) => text)).toEqual(['one\n', 'one\ntwo\n', 'new\n']);
+  });
+
+  it('refuses a pipe in words, and is not held up by it', async () => {
+    execFileSync('mkfifo', [path('pipe.csv')]);
+    const { files, refused } = start();
+    writeFileSync(path('good.csv'), 'good\n');
+    await until(() => expect(files.map(([name]) => name)).toEqual(['good.csv']));
+    await until(() => expect(refused).toEqual([['pipe.csv', 'not-regular']]));
+  });
+
+  it('survives the folder being removed and made again', async () => {
+    const { files, folders } = start();
+    await until(() => expect(folders).toContain(true));
+    rmSync(folder, { recursive: true });
+    await until(() => expect(folders.at(-1)).toBe(false));
+    mkdirSync(folder);
+    writeFileSync(path('back.csv'), 'back\n');
+    await until(() => expect(files.map(([name]) => name)).toEqual(['back.csv']));
+    expect(folders.at(-1)).toBe(true);
+  });
+
+  it('finds files by polling, and a deleted one costs nothing', async () => {
+    const { files } = start(true);
+    writeFileSync(path('gone.csv'), 'no newline yet');
+    unlinkSync(path('gone.csv'));
+    writeFileSync(path('p.csv'), 'polled\n');
+    await until(() => expect(files.map(([name]) => name)).toEqual(['p.csv']));
+  });
+});
+
+describe('the rule of completeness', () => {
+  const at = (age_ms: number, lastByte: number | undefined) =>
+    isComplete({ bytes: 10, modified_ms: 1000, lastByte }, 1000 + age_ms);
+  it('a closing newline needs a little quiet', () => {
+    expect(at(QUIET_MS - 1, 10)).toBe(false);
+    expect(at(QUIET_MS, 10)).toBe(true);
+  });
+  it('no closing newline needs patience', () => {
+    expect(at(PATIENCE_MS - 1, 49)).toBe(false);
+    expect(at(PATIENCE_MS, 49)).toBe(true);
+  });
+  it('a file from a clock ahead of ours is taken by its newline alone', () => {
+    expect(at(-5000, 10)).toBe(true);
+    expect(at(-5000, 49)).toBe(false);
+  });
+});
