@@ -86,11 +86,15 @@ export class EvidenceMaker {
   }
 }
 
-export function oddsOf(odds: Float32Array, star: number): Record<StarClass, number> {
-  return Object.fromEntries(CLASSES.map((name, c) => [name, odds[star * CLASS_COUNT + c]])) as Record<
-    StarClass,
-    number
-  >;
+/** A star's odds by name, each passed through `shape` (rounding, for output). */
+export function oddsOf<T = number>(
+  odds: Float32Array,
+  star: number,
+  shape: (value: number) => T = value => value as T,
+): Record<StarClass, T> {
+  const named = {} as Record<StarClass, T>;
+  for (let c = 0; c < CLASS_COUNT; c++) named[CLASSES[c]] = shape(odds[star * CLASS_COUNT + c]);
+  return named;
 }
 
 /** Turn-off of the cluster in the band of the diagram; NaN without an age. */

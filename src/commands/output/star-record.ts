@@ -89,9 +89,7 @@ export class RecordMaker {
       spectral_type: type === '' ? null : type,
       luminosity_class: known ? starClass : null,
       class: known ? className(starClass) : null,
-      odds: Object.fromEntries(
-        Object.entries(oddsOf(odds.odds, star)).map(([name, value]) => [name, rounded(value, 4)]),
-      ),
+      odds: oddsOf(odds.odds, star, value => rounded(value, 4)),
       teff_K: rounded(odds.teff_K[star], 0),
       teff_sigma_K: rounded(odds.teffSigma_K[star], 0),
       distance_pc: rounded(10 ** ((odds.modulus_mag[star] + 5) / 5), 1),
@@ -105,11 +103,13 @@ export class RecordMaker {
 
   private magnitudes(star: number): StarRecord['mags'] {
     const { bands, mag, sigma_mag } = this.engine.inputs;
-    const entries = bands.map((band, b) => [
-      band,
-      { value: rounded(mag[b][star], 4), sigma: rounded(sigma_mag[b][star], 4), n: this.counts[b][star] },
-    ]);
-    return Object.fromEntries(entries.filter(([, entry]) => (entry as { value: unknown }).value !== null));
+    const named: Record<string, { value: number; sigma: number; n: number }> = {};
+    bands.forEach((band, b) => {
+      const value = rounded(mag[b][star], 4);
+      if (value !== null)
+        named[band] = { value, sigma: rounded(sigma_mag[b][star], 4) ?? 0, n: this.counts[b][star] };
+    });
+    return named;
   }
 
   private colour(star: number): StarRecord['colour'] {
@@ -168,7 +168,11 @@ function isoTime(time_ms: number | undefined): string | null {
   return new Date(Math.round(time_ms / 1000) * 1000).toISOString().replace('.000Z', 'Z');
 }
 
-/** A number with so many decimals; null for what is not known. */
+const POWERS = [1, 10, 100, 1e3, 1e4, 1e5, 1e6];
+
+/** A number with so many decimals (up to six); null for what is not known. */
 export function rounded(value: number, decimals: number): number | null {
-  return Number.isFinite(value) ? Number(value.toFixed(decimals)) : null;
+  if (!Number.isFinite(value)) return null;
+  const scale = POWERS[decimals];
+  return Math.round(value * scale) / scale;
 }

@@ -400,12 +400,12 @@ const R_V = 3.1;
 /** A star's own E(B-V) is trusted to 10 %, never better than 0.05 mag of A_V. */
 const STAR_AV_ERROR = 0.1;
 const STAR_AV_FLOOR = 0.05;
-/** Nodes further off in colour are not looked at: e^-15 of their density is far below the flat class. */
-const MISFIT_LIMIT_CHI2 = 30;
+/** Nodes further off in colour are not looked at: e^-12 of their density is far below the flat class. */
+const MISFIT_LIMIT_CHI2 = 25;
 /** Nodes with less of the weight than this, against the best one, are not kept. */
 const NEGLIGIBLE = 1e-9;
 /** Misfit in colour and distance together beyond which a node is dropped. */
-const JOINT_LIMIT_CHI2 = 48;
+const JOINT_LIMIT_CHI2 = 40;
 /** An offset is stretched by less than this many sigma of the extinction prior. */
 const EXTINCTION_SLACK_SIGMA = 7;
 /** No colour changes by more than this per magnitude of A_V (U-yP1: 1.2; a colour of the axes: far less). */

@@ -1,86 +1,82 @@
 import { formatProblem } from '../../catalogue/problems.js';
-import type { ExposureSuggestion } from '../../follow/exposure/suggestion.js';
-import type { TargetWindow } from '../../follow/sky/window.js';
 import type { FrameSummary, NightView, ShortlistEntry } from '../../night/view.js';
-import { clockText, durationText, fixed, secondsText } from '../pictures/text.js';
+import { costSummary } from '../pictures/files-page.js';
+import { byOdds, exposureWords, firstPossible, flagWords, startByWords } from '../pictures/star-words.js';
+import { count } from '../pictures/status-line.js';
+import { clockText } from '../pictures/text.js';
 
-/** Tells a night line by line, each thing once: frames, problems, stars as they are flagged. */
+/** Tells a night as lines of text, for pipes and log files: each thing once, when it comes. */
 export class PlainNight {
-  private readonly frames = new Set<number>();
-  private readonly flagged = new Map<number, string>();
-  private problems = 0;
+  private previous: NightView | undefined;
 
-  /** Lines for what is new in a view. */
+  /** What is new since the view before. */
   next(view: NightView): string[] {
-    const lines: string[] = [];
-    for (const frame of view.frames) {
-      if (this.frames.has(frame.index)) continue;
-      this.frames.add(frame.index);
-      lines.push(frameLine(frame, view));
-    }
-    for (const problem of view.problems.slice(this.problems))
-      lines.push(`problem  ${formatProblem(problem)}`);
-    this.problems = view.problems.length;
-    for (const entry of view.shortlist) {
-      const codes = entry.flags.map(flag => flag.code).join(' ');
-      if (this.flagged.get(entry.star) === codes) continue;
-      this.flagged.set(entry.star, codes);
-      lines.push(...entryLines(entry));
-    }
+    const lines = newLines(view, this.previous);
+    this.previous = view;
     return lines;
   }
 
-  /** The night in a few lines: what to point at, best first. */
+  /** How the night stands at its end. */
   summary(view: NightView): string[] {
-    const count = (n: number, one: string, many = `${one}s`) => `${n} ${n === 1 ? one : many}`;
-    const refused = new Set(
-      view.problems.filter(problem => problem.cost === 'file').map(problem => problem.file),
-    ).size;
-    return [
-      '',
-      `${view.field}: ${count(view.frames.length, 'file')} read, ${count(view.duplicates, 'duplicate')}, ${count(refused, 'file')} refused, ${count(view.stars.count, 'star')}, ${view.shortlist.length} flagged; ${view.conditions.darkWords}`,
-      ...view.shortlist.map((entry, i) => `${String(i + 1).padStart(2)}  ${shortLine(entry)}`),
-    ];
+    return summaryLines(view);
   }
 }
 
-function frameLine(frame: FrameSummary, view: NightView): string {
-  const bands = frame.bands.length === 0 ? 'positions and parallaxes' : frame.bands.join(' ');
-  const parts = [
-    `frame    ${clockText(frame.mid_ms)} UT  ${frame.name}`,
-    `${frame.rows} stars in ${bands}`,
-    frame.fwhm_arcsec > 0 ? `FWHM ${fixed(frame.fwhm_arcsec, 1)} arcsec` : '',
-    `night so far ${view.stars.count} stars`,
-  ];
-  return parts.filter(part => part !== '').join(', ');
-}
-
-function entryLines(entry: ShortlistEntry): string[] {
-  const flags = entry.flags.map(flag => flag.code).join(', ');
+/**
+ * One line for each frame read, each star newly flagged (with reason, exposure and latest start) or no longer
+ * flagged, and each problem since the previous view.
+ */
+export function newLines(view: NightView, previous: NightView | undefined): string[] {
+  const time = `${clockText(view.time_ms)} UT`;
+  const before = new Map(previous?.shortlist.map(entry => [entry.star, entry]));
+  const now = new Set(view.shortlist.map(entry => entry.star));
+  const flagged = view.shortlist.filter(entry => !before.has(entry.star));
+  const gone = [...before.values()].filter(entry => !now.has(entry.star));
   return [
-    `flagged  ${entry.id}  ${entry.spectralType}  ${flags}`,
-    ...entry.flags.map(flag => `         ${flag.because}`),
-    ...entry.exposures.map(exposure => `         ${exposure.setup}: ${exposureWords(exposure)}`),
-    `         ${windowWords(entry.window)}`,
+    ...newFrames(view, previous).map(frame => `${time}  frame    ${frameText(frame)}`),
+    ...view.problems
+      .slice(previous?.problems.length ?? 0)
+      .map(problem => `${time}  problem  ${formatProblem(problem)}`),
+    ...flagged.map(entry => `${time}  flagged  ${entryText(entry, view.time_ms)}`),
+    ...gone.map(entry => `${time}  cleared  ${entry.id}: no longer flagged`),
   ];
 }
 
-function shortLine(entry: ShortlistEntry): string {
-  const first = entry.exposures.find(exposure => exposure.possible) ?? entry.exposures[0];
-  const exposure = first === undefined ? '' : `  ${first.setup}: ${exposureWords(first)}`;
-  return `${entry.id}  ${entry.spectralType}  ${entry.flags.map(flag => flag.code).join(', ')}${exposure}  ${windowWords(entry.window)}`;
+/** Totals, then the shortlist as it stands. */
+export function summaryLines(view: NightView): string[] {
+  const problems =
+    view.problems.length === 0
+      ? 'no problems'
+      : `${count(view.problems.length, 'problem')} (${costSummary(view.problems)})`;
+  return [
+    `${count(view.frames.length, 'frame')} read, ${count(view.stars.count, 'star')}, ${view.shortlist.length} flagged, ${problems}`,
+    ...view.shortlist.map((entry, i) => `${String(i + 1).padStart(3)}  ${entryText(entry, view.time_ms)}`),
+  ];
 }
 
-/** '1 x 715 s, S/N 30, 16 min with overheads', or why not. */
-export function exposureWords(exposure: ExposureSuggestion): string {
-  if (!exposure.possible) return exposure.limitedBy;
-  return `${exposure.count} x ${secondsText(exposure.each_s)}, S/N ${fixed(exposure.snr, 0)}, ${durationText(exposure.total_s)} with overheads`;
+/** A frame that was reduced again stands at its old index with other contents: it is told again. */
+function newFrames(view: NightView, previous: NightView | undefined): readonly FrameSummary[] {
+  const known = new Map(previous?.frames.map(frame => [frame.index, frame]));
+  return view.frames.filter(frame => {
+    const before = known.get(frame.index);
+    return before === undefined || before.rows !== frame.rows || before.mid_ms !== frame.mid_ms;
+  });
 }
 
-/** 'airmass 1.02, start by 04:40 UT', or why it cannot be. */
-export function windowWords(window: TargetWindow): string {
-  const airmass = Number.isNaN(window.airmassNow) ? 'not up' : `airmass ${fixed(window.airmassNow, 2)}`;
-  return window.blockedBy === ''
-    ? `${airmass}, start by ${clockText(window.startBy_ms)} UT`
-    : `${airmass}, ${window.blockedBy}`;
+function frameText(frame: FrameSummary): string {
+  const parts = [`${frame.name}: ${frame.bands.join(' ')}`, count(frame.rows, 'row')];
+  if (!Number.isNaN(frame.mid_ms)) parts.push(`mid ${clockText(frame.mid_ms)} UT`);
+  if (!Number.isNaN(frame.fwhm_arcsec)) parts.push(`FWHM ${frame.fwhm_arcsec.toFixed(1)}"`);
+  if (!Number.isNaN(frame.zeroPoint_mag)) parts.push(`zero point ${frame.zeroPoint_mag.toFixed(2)} mag`);
+  return parts.join(', ');
+}
+
+function entryText(entry: ShortlistEntry, now_ms: number): string {
+  const reasons = byOdds(entry.flags).map(flag => `${flagWords(flag.code)}: ${flag.because}`);
+  return [
+    `${entry.id}  ${entry.spectralType}`,
+    ...reasons,
+    exposureWords(firstPossible(entry.exposures)),
+    startByWords(entry.window, now_ms),
+  ].join('; ');
 }
