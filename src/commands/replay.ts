@@ -41,7 +41,7 @@ export async function replayCommand(
   const target = mkdtempSync(join(tmpdir(), 'nightsieve-replay-'));
   const remove = () => rmSync(target, { recursive: true, force: true });
   process.on('exit', remove);
-  const clock = { begins_ms: timetable.begins, startedAt_ms: Date.now(), speed };
+  const clock = { begins_ms: timetable.begins, ends_ms: timetable.ends, startedAt_ms: Date.now(), speed };
   const player = new NightPlayer(folder, target, timetable, clock);
   try {
     player.start();
