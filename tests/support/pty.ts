@@ -74,6 +74,11 @@ export class PtySession {
     return this.terminal.buffer.active.type === 'alternate';
   }
 
+  /** Waits until the emulator has taken in everything that was written. */
+  settled(): Promise<void> {
+    return new Promise(resolve => this.terminal.write('', resolve));
+  }
+
   /** Waits until the screen shows something. */
   async shows(what: string | RegExp, patience_ms = 15_000): Promise<void> {
     const shown = () => (typeof what === 'string' ? this.screen().includes(what) : what.test(this.screen()));

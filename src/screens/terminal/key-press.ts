@@ -28,6 +28,6 @@ export type KeyPress =
   | { readonly name: 'paste'; readonly text: string };
 
 /** A plain key without modifiers. */
-export function plainKey(name: KeyName, char = ''): KeyPress {
+export function plainKey(name: KeyName, char = ''): Exclude<KeyPress, { readonly name: 'paste' }> {
   return { name, char, ctrl: false, meta: false, shift: false };
 }

@@ -13,7 +13,10 @@ import { nightView, starColumns } from '../../support/night-view.js';
 const PLAIN = { sigma: 0.1, starClass: 'V', odds: 0.9, subtype: 42, teff_K: 5800 } as const;
 
 function starsAt(...places: readonly (readonly [number, number])[]) {
-  return starColumns(places.map(([colour, absMag], i) => ({ ...PLAIN, id: `S${i}`, colour, absMag })), 0);
+  return starColumns(
+    places.map(([colour, absMag], i) => ({ ...PLAIN, id: `S${i}`, colour, absMag })),
+    0,
+  );
 }
 
 describe('the window of the diagram', () => {

@@ -64,7 +64,11 @@ describe('news', () => {
     const { store } = storeWith(earlierView());
     expect(store.getState().unseen.size).toBe(0);
     store.dispatch({ kind: 'view', view: nightView() });
-    expect([...store.getState().unseen]).toEqual(nightView().shortlist.slice(3).map(entry => entry.star));
+    expect([...store.getState().unseen]).toEqual(
+      nightView()
+        .shortlist.slice(3)
+        .map(entry => entry.star),
+    );
     expect(store.getState().message).toBe('new: NS-0504, supergiant and 1 more');
     store.dispatch(key('n'));
     expect(store.getState().selected).toBe(nightView().shortlist[3].star);
@@ -158,8 +162,8 @@ describe('search', () => {
 });
 
 it('no sequence of keys breaks the state, with or without a night', () => {
-  const names = [...new Set(KEY_LIST.flatMap(entry => entry.keys))].map(name =>
-    ({ enter: 'return', 'page-up': 'pageup', 'page-down': 'pagedown' })[name] ?? name,
+  const names = [...new Set(KEY_LIST.flatMap(entry => entry.keys))].map(
+    name => ({ enter: 'return', 'page-up': 'pageup', 'page-down': 'pagedown' })[name] ?? name,
   );
   const events = fc.array(fc.constantFrom(...names.filter(name => !name.includes('-') || name === '-')), {
     maxLength: 60,
