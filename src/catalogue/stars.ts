@@ -21,6 +21,7 @@ export class StarCatalogue {
   private readonly means = new Map<Band, BandMeans>();
   private readonly frames = new Map<number, KeptFrame>();
   private readonly finder: StarFinder;
+  private readonly nameless = new Set<number>();
   private total = 0;
 
   constructor(matchRadius_arcsec: number) {
@@ -125,7 +126,7 @@ export class StarCatalogue {
       star === NO_STAR ? this.addStar(frame, row) : star,
     );
     stars.forEach((star, row) => {
-      this.finder.name(frame.ids[row], star);
+      this.takeName(frame.ids[row], star);
       this.addPosition(frame, row, star);
     });
     const kept = keepFrame(frame, stars);
@@ -180,6 +181,7 @@ export class StarCatalogue {
     const star = this.ids.length;
     const [ra, dec] = [frame.ra_deg[row], frame.dec_deg[row]];
     this.ids.push(this.freeName(frame.ids[row], ra, dec));
+    if (frame.ids[row] === '') this.nameless.add(star);
     this.finder.name(this.ids[star], star);
     this.positions.ensure(star + 1);
     this.positions.get('ra_deg')[star] = ra;
@@ -194,6 +196,15 @@ export class StarCatalogue {
     let name = base;
     for (let number = 2; this.finder.isTaken(name); number++) name = `${base} (${number})`;
     return name;
+  }
+
+  /** A star that had to be named after its position takes the first identifier a file has for it. */
+  private takeName(own: string, star: number): void {
+    if (own !== '' && this.nameless.has(star) && !this.finder.isTaken(own)) {
+      this.nameless.delete(star);
+      this.ids[star] = own;
+    }
+    this.finder.name(own, star);
   }
 
   private addReadings(frame: KeptFrame, frameIndex: number): void {

@@ -1,7 +1,7 @@
 import { appendFileSync, readFileSync, renameSync, writeFileSync } from 'node:fs';
 import { basename, join } from 'node:path';
 import type { ClockSetting } from '../night/clock.js';
-import type { Timetable } from './replay.js';
+import type { Timetable } from './timetable.js';
 
 interface Step {
   readonly at_ms: number;

@@ -1,24 +1,6 @@
-import type { Profile } from '../follow/settings.js';
-import { type ClockSetting, makeClock } from '../night/clock.js';
-import { WorkerClient } from '../night/worker-client.js';
-import type { GlyphName, PaletteName } from '../screens/terminal/look.js';
 import type { CommandIo } from './io.js';
 import type { NightPlayer } from './night-player.js';
-
-/** Options of the commands that show a night. */
-export interface NightOptions {
-  readonly palette?: PaletteName;
-  readonly glyphs?: GlyphName;
-  readonly plain?: boolean;
-}
-
-/** A night to be shown. */
-export interface NightSource {
-  readonly folder: string;
-  readonly profile: Profile;
-  readonly poll: boolean;
-  readonly clock: ClockSetting;
-}
+import type { NightOptions, NightSource } from './night-source.js';
 
 /**
  * Shows a night: on the screen where there is a terminal, as plain lines elsewhere. A played night ends by itself in
@@ -37,18 +19,4 @@ export async function runNight(
   }
   const { runScreen } = await import('./run-screen.js');
   return await runScreen(source, options);
-}
-
-/** Starts the worker of a source. */
-export function startWorker(
-  source: NightSource,
-  onMessage: ConstructorParameters<typeof WorkerClient>[1],
-  onFailure: (error: unknown) => void,
-): WorkerClient {
-  const { folder, profile, poll, clock } = source;
-  return new WorkerClient({ folder, profile, poll, clock }, onMessage, onFailure);
-}
-
-export function clockOf(source: NightSource) {
-  return makeClock(source.clock);
 }

@@ -5,7 +5,7 @@ import { PlainNight } from '../screens/plain/plain-night.js';
 import { EXIT } from './exit-codes.js';
 import type { CommandIo } from './io.js';
 import type { NightPlayer } from './night-player.js';
-import { type NightSource, startWorker } from './run-night.js';
+import { type NightSource, startWorker } from './night-source.js';
 
 /** A played night is over when its last file has been quiet for this long. */
 const SETTLED_MS = 500;

@@ -1,12 +1,12 @@
-import { createElement } from 'react';
+import { makeClock } from '../night/clock.js';
 import type { FromWorker } from '../night/messages.js';
-import { App } from '../screens/app.js';
+import { screensOf } from '../screens/app.js';
 import { initialState } from '../screens/state/screen-state.js';
 import { ScreenStore } from '../screens/state/store.js';
 import { chooseLook } from '../screens/terminal/capabilities.js';
 import { type RunningScreen, startScreen } from '../screens/terminal/render.js';
 import { EXIT } from './exit-codes.js';
-import { clockOf, type NightOptions, type NightSource, startWorker } from './run-night.js';
+import { type NightOptions, type NightSource, startWorker } from './night-source.js';
 
 /** The clock on the screen shows minutes: it is looked at a little more often than that. */
 const TICK_MS = 5000;
@@ -14,7 +14,7 @@ const MINUTE_MS = 60_000;
 
 /** Shows the night on the terminal until the observer quits. */
 export async function runScreen(source: NightSource, options: NightOptions): Promise<number> {
-  const clock = clockOf(source);
+  const clock = makeClock(source.clock);
   let screen: RunningScreen | undefined;
   let failure: unknown;
   const store = new ScreenStore(
@@ -41,6 +41,7 @@ export async function runScreen(source: NightSource, options: NightOptions): Pro
   );
   const onMessage = (message: FromWorker) => {
     if (message.kind === 'view') store.dispatch({ kind: 'view', view: message.view });
+    if (message.kind === 'folder') store.dispatch({ kind: 'folder', present: message.present });
     if (message.kind === 'detail') store.dispatch({ kind: 'detail', detail: message.detail });
   };
   const worker = startWorker(source, onMessage, error => {
@@ -60,8 +61,9 @@ export async function runScreen(source: NightSource, options: NightOptions): Pro
     Math.max(100, TICK_MS / source.clock.speed),
   );
   screen = startScreen({
-    app: createElement(App, { store }),
+    app: screensOf(store),
     onKey: key => {
+      // Before the screens' own quit: the shell is to see that it was an interruption.
       if (key.name === 'char' && key.ctrl && key.char === 'c') screen?.stop(EXIT.interrupted);
       else store.dispatch({ kind: 'key', key });
     },

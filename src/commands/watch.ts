@@ -3,7 +3,8 @@ import { REAL_TIME } from '../night/clock.js';
 import { UsageError } from './exit-codes.js';
 import type { CommandIo } from './io.js';
 import { profileFor } from './load-profile.js';
-import { type NightOptions, runNight } from './run-night.js';
+import type { NightOptions } from './night-source.js';
+import { runNight } from './run-night.js';
 
 /** Watches a folder until the observer quits. */
 export async function watchCommand(

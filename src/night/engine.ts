@@ -16,6 +16,7 @@ import { ChangeSearch } from './change-search.js';
 import { EvidenceMaker } from './evidence.js';
 import { FlagBook } from './flag-book.js';
 import { FrameLog } from './frame-log.js';
+import type { NightState } from './night-state.js';
 import type { FrameSummary } from './view.js';
 
 /** What happened to one file. */
@@ -31,16 +32,14 @@ export interface FileOutcome {
  * One night's state: every file read so far, the stars they merge into, what each star is, and which are
  * unusual. Knows neither disk nor clock; the worker and `classify` feed it.
  */
-export class NightEngine {
+export class NightEngine implements NightState {
   readonly catalogue: StarCatalogue;
   readonly flags: FlagBook;
   model: ClassModel;
   inputs: StarInputs;
-  /** Positions as they were when the inputs were read. */
-  positions: { readonly ra_deg: Float64Array; readonly dec_deg: Float64Array };
+  positions: NightState['positions'];
   odds: OddsColumns = makeOddsColumns(1024);
   readonly problems: Problem[] = [];
-  /** Files whose content had been read before. */
   duplicates = 0;
   private readonly summaries = new Map<number, FrameSummary>();
   private readonly log = new FrameLog();
@@ -55,7 +54,6 @@ export class NightEngine {
     this.positions = this.readPositions();
   }
 
-  /** Frames in order of time; plain catalogues first. */
   get frames(): readonly FrameSummary[] {
     return [...this.summaries.values()].sort(
       (a, b) =>

@@ -5,7 +5,7 @@ import { ExtinctionLaw } from '../science/extinction.js';
 import { MainSequenceLifetime } from '../science/main-sequence-lifetime.js';
 import { absMagOnLine, type TrackLine, tracksInAxes } from '../science/odds/index.js';
 import type { ChangesOfNight } from './change-search.js';
-import type { NightEngine } from './engine.js';
+import type { NightState } from './night-state.js';
 
 /** A member of the cluster by at least these odds takes its distance from the cluster. */
 const MEMBER_ODDS = 0.5;
@@ -22,10 +22,10 @@ export class EvidenceMaker {
   private readonly suspect: Uint8Array;
 
   constructor(
-    private readonly engine: NightEngine,
+    private readonly night: NightState,
     private readonly changes: ChangesOfNight,
   ) {
-    const { model, inputs, catalogue, profile } = engine;
+    const { model, inputs, catalogue, profile } = night;
     const lines = tracksInAxes(model.tracks, model.axes);
     this.dwarfs = lines.find(line => line.name === 'dwarfs');
     this.whiteDwarfs = lines.find(line => line.name === 'white dwarfs DA');
@@ -34,13 +34,13 @@ export class EvidenceMaker {
     const law = new ExtinctionLaw();
     this.reddening =
       law.ratio(model.axes.colour.blue, Number.NaN) - law.ratio(model.axes.colour.red, Number.NaN);
-    this.turnOffAbsMag = turnOffIn(engine, profile.field.age_Gyr);
+    this.turnOffAbsMag = turnOffIn(night, profile.field.age_Gyr);
     this.readings = catalogue.readings;
     this.suspect = catalogue.suspect;
   }
 
   of(star: number): StarEvidence {
-    const { model, inputs, odds, profile } = this.engine;
+    const { model, inputs, odds, profile } = this.night;
     const colour = this.colourOf(star);
     const intrinsicColour = colour - odds.extinction_AV[star] * this.reddening;
     return {
@@ -70,17 +70,17 @@ export class EvidenceMaker {
 
   private colourOf(star: number): number {
     if (this.blue < 0 || this.red < 0) return Number.NaN;
-    return this.engine.inputs.mag[this.blue][star] - this.engine.inputs.mag[this.red][star];
+    return this.night.inputs.mag[this.blue][star] - this.night.inputs.mag[this.red][star];
   }
 
   private colourSigmaOf(star: number): number {
     if (this.blue < 0 || this.red < 0) return Number.NaN;
-    const { sigma_mag } = this.engine.inputs;
+    const { sigma_mag } = this.night.inputs;
     return Math.hypot(sigma_mag[this.blue][star], sigma_mag[this.red][star]);
   }
 
   private distanceOf(star: number): DistanceSource {
-    const { odds, inputs } = this.engine;
+    const { odds, inputs } = this.night;
     if (odds.memberOdds[star] >= MEMBER_ODDS) return 'cluster';
     return Number.isNaN(inputs.parallax_mas[star] + inputs.parallaxSigma_mas[star]) ? 'none' : 'parallax';
   }
@@ -98,15 +98,15 @@ export function oddsOf<T = number>(
 }
 
 /** Turn-off of the cluster in the band of the diagram; NaN without an age. */
-function turnOffIn(engine: NightEngine, age_Gyr: number): number {
+function turnOffIn(night: NightState, age_Gyr: number): number {
   const turnOffV = new MainSequenceLifetime().turnOff_absMagV(age_Gyr);
   if (Number.isNaN(turnOffV)) return turnOffV;
-  const dwarfs = engine.model.tracks.find(track => track.name === 'dwarfs');
+  const dwarfs = night.model.tracks.find(track => track.name === 'dwarfs');
   const nearest = dwarfs?.points.reduce((best, point) =>
     Math.abs(point.absMag[BAND_INDEX.V] - turnOffV) < Math.abs(best.absMag[BAND_INDEX.V] - turnOffV)
       ? point
       : best,
   );
   if (nearest === undefined) return turnOffV;
-  return turnOffV + nearest.absMag[BAND_INDEX[engine.model.axes.band]] - nearest.absMag[BAND_INDEX.V];
+  return turnOffV + nearest.absMag[BAND_INDEX[night.model.axes.band]] - nearest.absMag[BAND_INDEX.V];
 }

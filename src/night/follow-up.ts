@@ -4,7 +4,7 @@ import type { TargetWindow } from '../follow/sky/window.js';
 import { PosteriorReader } from '../science/odds/index.js';
 import { zenithSeeing_arcsec } from '../science/photometry/seeing.js';
 import { median } from '../science/statistics.js';
-import type { NightEngine } from './engine.js';
+import type { NightState } from './night-state.js';
 import { SkyNow } from './sky-now.js';
 import type { FrameSummary } from './view.js';
 
@@ -24,13 +24,13 @@ export class FollowUpDesk {
   private reader: PosteriorReader | undefined;
   private readFor: unknown;
 
-  constructor(private readonly engine: NightEngine) {
-    this.sky = new SkyNow(engine.profile);
-    this.adviser = new ExposureAdviser(engine.profile);
+  constructor(private readonly night: NightState) {
+    this.sky = new SkyNow(night.profile);
+    this.adviser = new ExposureAdviser(night.profile);
   }
 
   of(star: number, now_ms: number): FollowUp {
-    const { positions, profile } = this.engine;
+    const { positions, profile } = this.night;
     const [ra, dec] = [positions.ra_deg[star], positions.dec_deg[star]];
     const sky = this.sky.at(now_ms);
     const tonight = sky.follow(ra, dec, now_ms);
@@ -46,7 +46,7 @@ export class FollowUpDesk {
 
   /** Seeing at the zenith from the newest frames, the profile's until there are any. */
   seeing_arcsec(): number {
-    const measured = this.engine.frames
+    const measured = this.night.frames
       .filter(frame => frame.fwhm_arcsec > 0)
       .slice(-RECENT_FRAMES)
       .map(frame =>
@@ -56,13 +56,13 @@ export class FollowUpDesk {
           this.wavelength_nm(frame),
         ),
       );
-    return measured.length === 0 ? this.engine.profile.site.seeing_arcsec : median(measured);
+    return measured.length === 0 ? this.night.profile.site.seeing_arcsec : median(measured);
   }
 
   private conditions(): Omit<ExposureConditions, 'airmass'> {
     return {
       seeing_arcsec: this.seeing_arcsec(),
-      siteHeight_m: this.engine.profile.site.height_m,
+      siteHeight_m: this.night.profile.site.height_m,
       cloud_mag: 0,
     };
   }
@@ -74,9 +74,9 @@ export class FollowUpDesk {
 
   /** One reader per state of the stars: its buffers are large. */
   private posterior(): PosteriorReader {
-    if (this.reader === undefined || this.readFor !== this.engine.inputs) {
-      this.readFor = this.engine.inputs;
-      this.reader = new PosteriorReader(this.engine.model, this.engine.inputs);
+    if (this.reader === undefined || this.readFor !== this.night.inputs) {
+      this.readFor = this.night.inputs;
+      this.reader = new PosteriorReader(this.night.model, this.night.inputs);
     }
     return this.reader;
   }

@@ -2,9 +2,9 @@ import { BAND_INDEX } from '../science/bands.js';
 import { CLASS_COUNT, CLASSES } from '../science/classes.js';
 import { distancePosterior } from '../science/distance/distance-posterior.js';
 import { spectralTypeText } from '../science/odds/index.js';
-import type { NightEngine } from './engine.js';
 import { oddsOf } from './evidence.js';
 import type { FollowUpDesk } from './follow-up.js';
+import type { NightState } from './night-state.js';
 import type { StarDetail } from './view.js';
 
 /** 16 % and 84 %: one sigma either side, for a Gaussian. */
@@ -12,20 +12,15 @@ const LOW = 0.1587;
 const HIGH = 0.8413;
 
 /** Gathers everything known about one star. */
-export function starDetail(
-  engine: NightEngine,
-  desk: FollowUpDesk,
-  star: number,
-  now_ms: number,
-): StarDetail {
-  const { catalogue, odds, inputs, model, flags } = engine;
+export function starDetail(night: NightState, desk: FollowUpDesk, star: number, now_ms: number): StarDetail {
+  const { catalogue, odds, inputs, model, flags } = night;
   const entry = flags.of(star);
   const index = star * CLASS_COUNT;
   return {
     star,
     id: catalogue.ids[star],
-    ra_deg: engine.positions.ra_deg[star],
-    dec_deg: engine.positions.dec_deg[star],
+    ra_deg: night.positions.ra_deg[star],
+    dec_deg: night.positions.dec_deg[star],
     spectralType: spectralTypeText(odds.odds, index, odds.subtype[star], odds.teff_K[star]),
     luminosityClass: CLASSES[odds.classIndex[star]],
     odds: oddsOf(odds.odds, star),
@@ -41,7 +36,7 @@ export function starDetail(
     absMag: { band: model.axes.band, value: odds.absMag[star], sigma: odds.absMagSigma[star] },
     teff_K: odds.teff_K[star],
     teffSigma_K: odds.teffSigma_K[star],
-    ...distances(engine, star),
+    ...distances(night, star),
     extinction_AV: odds.extinction_AV[star],
     parallax_mas: inputs.parallax_mas[star],
     parallaxSigma_mas: inputs.parallaxSigma_mas[star],
@@ -59,8 +54,8 @@ export function starDetail(
  * Distance with its 16-84 % range. A field star with a parallax is quoted from the parallax alone, so that the
  * number can be checked; a cluster member or a star without parallax from the fit.
  */
-function distances(engine: NightEngine, star: number) {
-  const { inputs, odds, profile } = engine;
+function distances(night: NightState, star: number) {
+  const { inputs, odds, profile } = night;
   const parallax = inputs.parallax_mas[star] - profile.field.parallaxZeroPoint_mas;
   const sigma = inputs.parallaxSigma_mas[star];
   if (sigma > 0 && !Number.isNaN(parallax) && !(odds.memberOdds[star] > 0.5)) {

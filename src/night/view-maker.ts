@@ -2,9 +2,9 @@ import { FLAG_CODES } from '../follow/flags/index.js';
 import { darkWords } from '../follow/sky/night-of.js';
 import { CLASS_COUNT } from '../science/classes.js';
 import { letterPositions, spectralTypeText, tracksInAxes } from '../science/odds/index.js';
-import type { NightEngine } from './engine.js';
 import { flagBits } from './flag-book.js';
 import type { FollowUpDesk } from './follow-up.js';
+import type { NightState } from './night-state.js';
 import { starDetail } from './star-detail.js';
 import type { Conditions, NightView, ShortlistEntry, StarColumns, StarDetail } from './view.js';
 
@@ -13,20 +13,20 @@ export class ViewMaker {
   private revision = 0;
 
   constructor(
-    private readonly engine: NightEngine,
+    private readonly night: NightState,
     private readonly desk: FollowUpDesk,
   ) {}
 
   view(now_ms: number): NightView {
-    const { engine } = this;
-    const { model } = engine;
+    const { night } = this;
+    const { model } = night;
     return {
       revision: ++this.revision,
       time_ms: now_ms,
-      field: engine.profile.field.name,
-      frames: engine.frames,
-      duplicates: engine.duplicates,
-      problems: engine.problems,
+      field: night.profile.field.name,
+      frames: night.frames,
+      duplicates: night.duplicates,
+      problems: night.problems,
       axes: model.axes,
       stars: this.columns(),
       shortlist: this.shortlist(now_ms),
@@ -37,11 +37,11 @@ export class ViewMaker {
   }
 
   detail(star: number, now_ms: number): StarDetail {
-    return starDetail(this.engine, this.desk, star, now_ms);
+    return starDetail(this.night, this.desk, star, now_ms);
   }
 
   private columns(): StarColumns {
-    const { catalogue, odds, inputs, model, flags } = this.engine;
+    const { catalogue, odds, inputs, model, flags } = this.night;
     const count = catalogue.count;
     const blue = inputs.bands.indexOf(model.axes.colour.blue);
     const red = inputs.bands.indexOf(model.axes.colour.red);
@@ -76,7 +76,7 @@ export class ViewMaker {
 
   /** Flagged stars by merit; of equal ones the one that must be begun first. */
   private shortlist(now_ms: number): ShortlistEntry[] {
-    const { catalogue, flags, odds } = this.engine;
+    const { catalogue, flags, odds } = this.night;
     const entries = flags.flagged().map(([star, entry]) => ({
       star,
       id: catalogue.ids[star],
@@ -93,7 +93,7 @@ export class ViewMaker {
   private conditions(now_ms: number): Conditions {
     const { ephemeris } = this.desk.sky;
     const { night } = this.desk.sky.at(now_ms);
-    const timed = this.engine.frames.filter(frame => !Number.isNaN(frame.mid_ms));
+    const timed = this.night.frames.filter(frame => !Number.isNaN(frame.mid_ms));
     const newest = timed.at(-1);
     return {
       seeing_arcsec: this.desk.seeing_arcsec(),
@@ -110,7 +110,7 @@ export class ViewMaker {
   }
 
   private zeroPointDrop(): number {
-    const frames = this.engine.frames.filter(frame => !Number.isNaN(frame.mid_ms + frame.zeroPoint_mag));
+    const frames = this.night.frames.filter(frame => !Number.isNaN(frame.mid_ms + frame.zeroPoint_mag));
     const newest = frames.at(-1);
     if (newest === undefined) return Number.NaN;
     const same = frames.filter(frame => frame.bands[0] === newest.bands[0]);

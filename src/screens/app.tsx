@@ -1,5 +1,5 @@
 import { Text } from 'ink';
-import { useSyncExternalStore } from 'react';
+import { type ReactNode, useSyncExternalStore } from 'react';
 import type { ScreenState } from './state/screen-state.js';
 import type { ScreenStore } from './state/store.js';
 import { FieldScreen } from './views/field-screen.js';
@@ -21,6 +21,11 @@ export function App({ store }: { store: ScreenStore }) {
     default:
       return <PageScreen key={size} state={state} screen={state.screen} />;
   }
+}
+
+/** What the terminal session is given to draw. */
+export function screensOf(store: ScreenStore): ReactNode {
+  return <App store={store} />;
 }
 
 function TooSmall({ state }: { state: ScreenState }) {

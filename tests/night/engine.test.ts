@@ -63,6 +63,8 @@ describe('a night of three stars', () => {
       [...forward.stars.absMag].map(mag => mag.toFixed(3)),
     );
     expect(backward.shortlist.map(entry => entry.flags[0].code)).toEqual(['white-dwarf']);
+    // The identifiers came last and were taken over all the same.
+    expect(backward.stars.ids).toEqual(['sun', 'dwarf', 'giant']);
   });
 
   it('counts the same content once, under whatever name', () => {

@@ -1,8 +1,8 @@
 import type { ExposureSuggestion } from '../../follow/exposure/suggestion.js';
 import type { TargetWindow } from '../../follow/sky/window.js';
-import type { NightEngine } from '../../night/engine.js';
 import { oddsOf } from '../../night/evidence.js';
 import type { FollowUpDesk } from '../../night/follow-up.js';
+import type { NightState } from '../../night/night-state.js';
 import { colourName } from '../../science/bands.js';
 import { CLASSES } from '../../science/classes.js';
 import { temperatureTypeText } from '../../science/odds/index.js';
@@ -56,20 +56,20 @@ export class RecordMaker {
   private readonly red: number;
 
   constructor(
-    private readonly engine: NightEngine,
+    private readonly night: NightState,
     private readonly desk: FollowUpDesk,
     private readonly now_ms: number,
   ) {
-    const { inputs, catalogue, model } = engine;
+    const { inputs, catalogue, model } = night;
     this.counts = inputs.bands.map(band => catalogue.readingsIn(band));
     this.blue = inputs.bands.indexOf(model.axes.colour.blue);
     this.red = inputs.bands.indexOf(model.axes.colour.red);
   }
 
   of(star: number): StarRecord {
-    const { engine } = this;
-    const { catalogue, odds, model } = engine;
-    const entry = engine.flags.of(star);
+    const { night } = this;
+    const { catalogue, odds, model } = night;
+    const entry = night.flags.of(star);
     const flagged = entry !== undefined && entry.flags.length > 0;
     const followUp = flagged ? this.desk.of(star, this.now_ms) : undefined;
     const known = odds.odds[star * CLASSES.length] >= 0;
@@ -77,8 +77,8 @@ export class RecordMaker {
     const type = known ? temperatureTypeText(starClass, odds.subtype[star], odds.teff_K[star]) : '';
     return {
       id: catalogue.ids[star],
-      ra_deg: rounded(engine.positions.ra_deg[star], 6),
-      dec_deg: rounded(engine.positions.dec_deg[star], 6),
+      ra_deg: rounded(night.positions.ra_deg[star], 6),
+      dec_deg: rounded(night.positions.dec_deg[star], 6),
       mags: this.magnitudes(star),
       abs_mag: {
         band: model.axes.band,
@@ -102,7 +102,7 @@ export class RecordMaker {
   }
 
   private magnitudes(star: number): StarRecord['mags'] {
-    const { bands, mag, sigma_mag } = this.engine.inputs;
+    const { bands, mag, sigma_mag } = this.night.inputs;
     const named: Record<string, { value: number; sigma: number; n: number }> = {};
     bands.forEach((band, b) => {
       const value = rounded(mag[b][star], 4);
@@ -113,7 +113,7 @@ export class RecordMaker {
   }
 
   private colour(star: number): StarRecord['colour'] {
-    const { inputs, model } = this.engine;
+    const { inputs, model } = this.night;
     const name = colourName(model.axes.colour);
     if (this.blue < 0 || this.red < 0) return { name, value: null, sigma: null };
     return {

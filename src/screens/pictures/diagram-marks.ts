@@ -14,6 +14,8 @@ export interface DiagramMarks {
   readonly fresh: readonly number[];
   /** -1: none. */
   readonly selected: number;
+  /** The arrow keys move in the diagram. */
+  readonly focused: boolean;
 }
 
 interface Cell {
@@ -37,6 +39,7 @@ export function withMarks(
   const grid = new Grid(picture.grid.width, picture.grid.height);
   grid.paste(0, 0, picture.grid);
   const signs = glyphsOf(glyphs);
+  if (marks.focused) drawPointer(grid, plot, signs);
   for (const star of marks.fresh) {
     const cell = cellFor(plot, stars, star, signs);
     if (cell !== undefined && cell.outside === '')
@@ -68,6 +71,13 @@ function drawSelected(grid: Grid, plot: DiagramPlot, stars: StarColumns, star: n
   if (cell === undefined) return;
   drawErrorBar(grid, plot, stars, star, cell, signs);
   setCell(grid, plot, cell, cell.outside || signs.selected, { colour: 'selected', inverse: true });
+}
+
+/** In the first free cell beside the name of the axis. */
+function drawPointer(grid: Grid, plot: DiagramPlot, signs: Glyphs): void {
+  let x = plot.left - 1;
+  while (x < grid.width && grid.at(x, 0) !== ' ') x++;
+  grid.set(x, 0, signs.pointer, { colour: 'title', bold: true });
 }
 
 /** One sigma of the absolute magnitude up and down, and a short line across. */

@@ -12,7 +12,6 @@ const COSTS: Readonly<Record<Problem['cost'], string>> = {
 };
 const INDENT = 4;
 const LEAST_NAME_WIDTH = 16;
-const NUMBERS_WIDTH = 52;
 
 /** What was wrong with files and what it cost, newest last; then the frames, newest first. */
 export function filesPage(view: NightView, width: number, height: number): Grid {
@@ -49,27 +48,40 @@ export function costSummary(problems: readonly Problem[]): string {
   return lost.length === 0 ? 'nothing lost' : `lost: ${lost.join(', ')}`;
 }
 
-function frameLines(frames: readonly FrameSummary[], width: number): Line[] {
-  const longest = Math.max(LEAST_NAME_WIDTH, ...frames.map(frame => frame.name.length + 2));
-  const nameWidth = Math.min(longest, width - NUMBERS_WIDTH);
-  const head = `${'frame'.padEnd(nameWidth)}${'mid UT'.padEnd(8)}${'bands'.padEnd(10)}${'rows'.padStart(7)}${'FWHM'.padStart(7)}${'airmass'.padStart(9)}${'zero pt'.padStart(9)}`;
-  if (frames.length === 0) return [[title('Frames')], [dim('None yet.')]];
-  return [
-    [title('Frames'), dim('  newest first')],
-    [dim(head)],
-    ...frames.toReversed().map(frame => [plain(frameText(frame, nameWidth))]),
-  ];
+interface FrameColumn {
+  readonly title: string;
+  readonly width: number;
+  readonly text: (frame: FrameSummary) => string;
 }
 
-function frameText(frame: FrameSummary, nameWidth: number): string {
-  const fwhm = Number.isNaN(frame.fwhm_arcsec) ? '-' : `${frame.fwhm_arcsec.toFixed(1)}"`;
+/** Most wanted first: on a narrow terminal the last ones are left out. */
+const FRAME_COLUMNS: readonly FrameColumn[] = [
+  { title: 'mid UT', width: 8, text: frame => clockText(frame.mid_ms) },
+  { title: 'bands', width: 10, text: frame => frame.bands.join(' ') },
+  { title: 'rows', width: 8, text: frame => String(frame.rows) },
+  { title: 'FWHM "', width: 8, text: frame => fixed(frame.fwhm_arcsec, 1) },
+  { title: 'zero point', width: 12, text: frame => fixed(frame.zeroPoint_mag, 2) },
+  { title: 'airmass', width: 9, text: frame => fixed(frame.airmass, 2) },
+  { title: 'sky mag/"2', width: 12, text: frame => fixed(frame.sky_magPerArcsec2, 2) },
+];
+
+function frameLines(frames: readonly FrameSummary[], width: number): Line[] {
+  if (frames.length === 0) return [[title('Frames')], [dim('None yet.')]];
+  const longest = Math.max(LEAST_NAME_WIDTH, ...frames.map(frame => frame.name.length + 2));
+  const nameWidth = Math.min(longest, Math.floor(width / 3));
+  const shown: FrameColumn[] = [];
+  let free = width - nameWidth;
+  for (const column of FRAME_COLUMNS) {
+    free -= column.width;
+    if (free < 0) break;
+    shown.push(column);
+  }
+  const row = (name: string, text: (column: FrameColumn) => string) =>
+    toWidth(toWidth(name, nameWidth - 1), nameWidth) +
+    shown.map(column => toWidthRight(text(column), column.width)).join('');
   return [
-    toWidth(toWidth(frame.name, nameWidth - 1), nameWidth),
-    clockText(frame.mid_ms).padEnd(8),
-    toWidth(frame.bands.join(' '), 10),
-    toWidthRight(String(frame.rows), 7),
-    toWidthRight(fwhm, 7),
-    toWidthRight(fixed(frame.airmass, 2), 9),
-    toWidthRight(fixed(frame.zeroPoint_mag, 2), 9),
-  ].join('');
+    [title('Frames'), dim('  newest first')],
+    [dim(row('frame', column => column.title))],
+    ...frames.toReversed().map((frame): Line => [plain(row(frame.name, column => column.text(frame)))]),
+  ];
 }

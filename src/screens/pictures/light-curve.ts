@@ -5,6 +5,7 @@ import { Grid } from '../terminal/grid.js';
 import type { GlyphName } from '../terminal/look.js';
 import { drawBottomAxis, drawLeftAxis } from './axes.js';
 import { nearestCell, type Scale } from './scales.js';
+import { count } from './status-line.js';
 import { clockText } from './text.js';
 import { roundTicks, timeTicks } from './ticks.js';
 
@@ -32,7 +33,7 @@ export function lightCurvePicture(curve: LightCurve, width: number, height: numb
   }
   const rows = height - 3;
   const y = magScale(points, curve, rows);
-  const { values, decimals } = roundTicks(y.from, y.to, Math.max(2, Math.floor(rows / ROWS_PER_TICK)));
+  const { values, decimals } = roundTicks(y.from, y.to, Math.max(3, Math.floor(rows / ROWS_PER_TICK)));
   const magTicks = values.map(value => ({ value, label: value.toFixed(decimals) }));
   const left = Math.max(2, ...magTicks.map(tick => tick.label.length)) + 1;
   const x = timeScale(points, width - left);
@@ -50,7 +51,7 @@ export function lightCurvePicture(curve: LightCurve, width: number, height: numb
   grid.put(
     left,
     0,
-    `${points.length} readings, ${glyphsOf(glyphs).plusMinus} ${medianSigma(curve)} mag each, UT`,
+    `${count(points.length, 'reading')}, ${glyphsOf(glyphs).plusMinus} ${medianSigma(curve)} mag, UT`,
     { colour: 'dim' },
   );
   return grid;

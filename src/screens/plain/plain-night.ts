@@ -44,12 +44,13 @@ export function newLines(view: NightView, previous: NightView | undefined): stri
 
 /** Totals, then the shortlist as it stands. */
 export function summaryLines(view: NightView): string[] {
+  const duplicates = view.duplicates === 0 ? '' : `, ${count(view.duplicates, 'duplicate')}`;
   const problems =
     view.problems.length === 0
       ? 'no problems'
       : `${count(view.problems.length, 'problem')} (${costSummary(view.problems)})`;
   return [
-    `${count(view.frames.length, 'frame')} read, ${count(view.stars.count, 'star')}, ${view.shortlist.length} flagged, ${problems}`,
+    `${view.field}: ${count(view.frames.length, 'frame')} read${duplicates}, ${count(view.stars.count, 'star')}, ${view.shortlist.length} flagged, ${problems}`,
     ...view.shortlist.map((entry, i) => `${String(i + 1).padStart(3)}  ${entryText(entry, view.time_ms)}`),
   ];
 }
@@ -59,12 +60,13 @@ function newFrames(view: NightView, previous: NightView | undefined): readonly F
   const known = new Map(previous?.frames.map(frame => [frame.index, frame]));
   return view.frames.filter(frame => {
     const before = known.get(frame.index);
-    return before === undefined || before.rows !== frame.rows || before.mid_ms !== frame.mid_ms;
+    return before === undefined || before.rows !== frame.rows || !Object.is(before.mid_ms, frame.mid_ms);
   });
 }
 
 function frameText(frame: FrameSummary): string {
-  const parts = [`${frame.name}: ${frame.bands.join(' ')}`, count(frame.rows, 'row')];
+  const bands = frame.bands.length === 0 ? 'no magnitudes' : frame.bands.join(' ');
+  const parts = [`${frame.name}: ${bands}`, count(frame.rows, 'row')];
   if (!Number.isNaN(frame.mid_ms)) parts.push(`mid ${clockText(frame.mid_ms)} UT`);
   if (!Number.isNaN(frame.fwhm_arcsec)) parts.push(`FWHM ${frame.fwhm_arcsec.toFixed(1)}"`);
   if (!Number.isNaN(frame.zeroPoint_mag)) parts.push(`zero point ${frame.zeroPoint_mag.toFixed(2)} mag`);

@@ -29,7 +29,15 @@ export function openStar(state: ScreenState): Step<ScreenState> {
 }
 
 function arrived(state: ScreenState): ScreenState {
-  return state.screen === 'stars' ? withRows(state) : state;
+  return state.screen === 'stars' ? withCurrentVisible(withRows(state)) : state;
+}
+
+/** Scrolls the table to the current star, where it lists it. */
+function withCurrentVisible(state: ScreenState): ScreenState {
+  const { rows, anchor } = state.table;
+  const row = rows.indexOf(currentStar(state));
+  if (row < 0) return state;
+  return { ...state, table: { ...state.table, anchor: follow(rows, anchor, tableHeight(state.rows), row) } };
 }
 
 /** The table's rows brought up to date with the view; made only while the table is shown. */

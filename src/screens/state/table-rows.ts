@@ -52,9 +52,8 @@ function sortRows(
 ): Uint32Array {
   const sign = choice.descending ? -1 : 1;
   if (choice.sort === 'id') {
-    const { ids } = view.stars;
-    const order = new Intl.Collator('en', { numeric: true });
-    return rows.sort((a, b) => sign * order.compare(ids[a], ids[b]) || a - b);
+    const keys = view.stars.ids.map(naturalKey);
+    return rows.sort((a, b) => (keys[a] === keys[b] ? a - b : keys[a] < keys[b] ? -sign : sign));
   }
   const values = sortValues(view, choice.sort);
   return rows.sort((a, b) => {
@@ -63,6 +62,11 @@ function sortRows(
     if (Number.isNaN(x) || Number.isNaN(y)) return Number.isNaN(x) ? 1 : -1;
     return x < y ? -sign : sign;
   });
+}
+
+/** Puts 'S9' before 'S10': numbers are padded to one length. A sort by such keys is far quicker than a collator. */
+function naturalKey(id: string): string {
+  return id.toLowerCase().replace(/\d+/g, digits => digits.padStart(12, '0'));
 }
 
 function sortValues(

@@ -22,10 +22,12 @@ export function DiagramView({ state, size }: { state: ScreenState; size: Size })
     [view, whole, window, width, height, glyphs],
   );
   const selected = currentStar(state);
+  const focused = state.focus === 'diagram';
   const grid = useMemo(() => {
     if (view === undefined || picture === undefined || view.frames.length === 0)
-      return noticePicture([`waiting for the first file in`, state.place], width, height);
-    return withMarks(picture, view.stars, { shortlist: view.shortlist, unseen, fresh, selected }, glyphs);
-  }, [picture, view, unseen, fresh, selected, glyphs, state.place, width, height]);
+      return noticePicture(['waiting for the first file in', state.place], width, height);
+    const marks = { shortlist: view.shortlist, unseen, fresh, selected, focused };
+    return withMarks(picture, view.stars, marks, glyphs);
+  }, [picture, view, unseen, fresh, selected, focused, glyphs, state.place, width, height]);
   return <Panel grid={grid} look={look} />;
 }

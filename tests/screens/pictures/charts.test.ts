@@ -41,7 +41,7 @@ describe('the light curve', () => {
 
   it('draws with no reading, one reading, equal readings and unknown values', () => {
     expect(lightCurvePicture(curve([]), 50, 10, 'braille').toPlainText()).toContain('no readings');
-    expect(lightCurvePicture(curve([Number.NaN, 14]), 40, 10, 'ascii').toPlainText()).toContain('1 readings');
+    expect(lightCurvePicture(curve([Number.NaN, 14]), 40, 10, 'ascii').toPlainText()).toContain('1 reading,');
     const equal = lightCurvePicture(curve([14, 14, 14]), 40, 10, 'ascii').toPlainText();
     expect(rowsOf(equal).slice(1).join('').match(/o/g)).toHaveLength(3);
     const sameTime = lightCurvePicture(curve([14, 13], [0, 0]), 40, 10, 'ascii').toPlainText();

@@ -8,7 +8,13 @@ import { type DiagramWindow, wholeWindow } from '../../../src/screens/state/diag
 import type { GlyphName } from '../../../src/screens/terminal/look.js';
 import { crowdedView, nightView, starColumns } from '../../support/night-view.js';
 
-const NO_MARKS = { shortlist: [], unseen: new Set<number>(), fresh: [], selected: -1 } as const;
+const NO_MARKS = {
+  shortlist: [],
+  unseen: new Set<number>(),
+  fresh: [],
+  selected: -1,
+  focused: false,
+} as const;
 const PLAIN = { sigma: 0.1, starClass: 'V', odds: 0.9, subtype: 42, teff_K: 5800 } as const;
 
 function viewOf(...places: readonly (readonly [number, number])[]): NightView {
@@ -144,6 +150,16 @@ describe('marks on the diagram', () => {
         .slice(1, -2)
         .filter(line => line.slice(5).includes('|')).length,
     ).toBeGreaterThan(1);
+  });
+
+  it('say where the arrow keys move', () => {
+    const view = nightView();
+    const text = (focused: boolean) =>
+      withMarks(drawn(view), view.stars, { ...NO_MARKS, focused }, 'ascii')
+        .toPlainText()
+        .split('\n')[0];
+    expect(text(true)).toMatch(/^M_V>/);
+    expect(text(false)).not.toContain('>');
   });
 
   it('leave the picture they are drawn on as it was', () => {

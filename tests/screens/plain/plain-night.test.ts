@@ -28,7 +28,9 @@ describe('the night as plain lines', () => {
 
   it('ends with totals and the shortlist', () => {
     const lines = summaryLines(nightView());
-    expect(lines[0]).toBe('24 frames read, 400 stars, 5 flagged, 3 problems (lost: 1 file, 2 rows)');
+    expect(lines[0]).toBe(
+      'Northern strip 4: 24 frames read, 1 duplicate, 400 stars, 5 flagged, 3 problems (lost: 1 file, 2 rows)',
+    );
     expect(lines).toHaveLength(6);
     expect(lines[1]).toContain('  1  NS-0501  D3 WD 0.99; white dwarf: M_V +11.3');
   });

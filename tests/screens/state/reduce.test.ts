@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { NightView } from '../../../src/night/view.js';
 import { KEY_LIST } from '../../../src/screens/keys/key-list.js';
+import { visibleRows } from '../../../src/screens/state/navigation.js';
 import { reduce } from '../../../src/screens/state/reduce.js';
 import { currentStar } from '../../../src/screens/state/selection.js';
 import { NOW_MS, nightView, starDetail } from '../../support/night-view.js';
@@ -49,6 +50,14 @@ describe('selection', () => {
     expect(store.getState().selected).toBe(selected);
     expect(store.getState().table.anchor).toEqual(table.anchor);
     expect(store.getState().table.rows[0]).toBe(399);
+  });
+
+  it('opens the table at the star that was selected elsewhere', () => {
+    const { store } = storeWith(nightView());
+    for (const name of ['tab', 'left', 'left', 's']) store.dispatch(key(name));
+    const state = store.getState();
+    expect(state.selected).toBeLessThan(395);
+    expect([...visibleRows(state)]).toContain(state.selected);
   });
 
   it('two keys in one read both count', () => {
