@@ -18,7 +18,6 @@ export const PLAIN_NAMES: Readonly<Record<PlainMeaning, readonly string[]>> = {
     'star',
     'object_id',
     'identifier',
-  ].concat([
     'designation',
     'main_id',
     'name',
@@ -31,7 +30,7 @@ export const PLAIN_NAMES: Readonly<Record<PlainMeaning, readonly string[]>> = {
     'HD',
     'target',
     'number',
-  ]),
+  ],
   ra: [
     'ra',
     'RA_ICRS',
@@ -56,7 +55,10 @@ export const PLAIN_NAMES: Readonly<Record<PlainMeaning, readonly string[]>> = {
     'DELTA_J2000',
     '_DE',
     '_DE_icrs',
-  ].concat(['delta', 'decl', 'declination']),
+    'delta',
+    'decl',
+    'declination',
+  ],
   parallax: ['parallax', 'plx', 'plx_value'],
   parallax_error: [
     'parallax_error',
@@ -95,7 +97,12 @@ export const PLAIN_NAMES: Readonly<Record<PlainMeaning, readonly string[]>> = {
     'edge',
     'near_edge',
     'suspect',
-  ].concat(['flag_saturated', 'flag_blended', 'flag_edge', 'phot_flag', 'bad']),
+    'flag_saturated',
+    'flag_blended',
+    'flag_edge',
+    'phot_flag',
+    'bad',
+  ],
 };
 
 /** How tables abbreviate a band inside column names. */

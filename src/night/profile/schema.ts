@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { isMeaning } from '../../catalogue/columns/meanings.js';
 import { DEFAULT_FLAGS } from '../../follow/flags/index.js';
 import { BANDS } from '../../science/bands.js';
 import { CLASSES } from '../../science/classes.js';
@@ -115,6 +116,14 @@ export const profileSchema = z
     columns: z.record(z.string(), z.string()).default({}),
   })
   .superRefine((profile, context) => {
+    for (const meaning of Object.keys(profile.columns)) {
+      if (isMeaning(meaning)) continue;
+      context.addIssue({
+        code: 'custom',
+        path: ['columns', meaning],
+        message: 'a meaning such as ra, dec, parallax, "mag.V" or "mag_error.V" before the =',
+      });
+    }
     const known = new Set(profile.band.map(entry => entry.band));
     profile.setup.forEach((entry, i) => {
       if (entry.kind === 'imager' && !known.has(entry.band)) {

@@ -66,6 +66,11 @@ describe('what is wrong is told with file, line, key, what was seen and what was
       'time_zone = "Mars/Olympus"',
       /site\.time_zone: saw "Mars\/Olympus", expected an IANA time zone/,
     ],
+    [
+      '# ra = "ALPHA_SKY"',
+      '"mag.R" = "R"',
+      /mine\.toml:\d+: columns\.mag\.R: saw "R", expected a meaning such as ra, dec/,
+    ],
     ['name = "My hill"', 'name = "My hill', /^mine\.toml:8: not TOML/],
   ])('%s -> %s', (from, to, wording) => {
     const told = changed(from, to);
