@@ -1,0 +1,117 @@
+import { readFrame } from '../../src/catalogue/read-frame.js';
+import { StarCatalogue } from '../../src/catalogue/stars.js';
+import {
+  buildModel,
+  classifyStars,
+  type FieldPrior,
+  makeOddsColumns,
+  type StarInputs,
+} from '../../src/science/odds/index.js';
+import { CellWriter } from '../../src/screens/terminal/cell-writer.js';
+
+/** Prints how long the heavy steps take on this machine, and ratios that mean something on any: npm run bench. */
+const STARS = 100_000;
+
+const FIELD: FieldPrior = {
+  population: 'field',
+  modulus_mag: Number.NaN,
+  modulusSigma_mag: Number.NaN,
+  memberShare: 0,
+  age_Gyr: Number.NaN,
+  extinction_AV: 0.1,
+  extinctionSigma_AV: 0.05,
+  lengthScale_pc: 1350,
+  parallaxZeroPoint_mas: 0,
+  floor_mag: 0.02,
+  classScale: {},
+};
+
+function timed<T>(work: () => T): [T, number] {
+  const start = performance.now();
+  const result = work();
+  return [result, (performance.now() - start) / 1000];
+}
+
+function line(name: string, seconds: number, count: number, unit: string): void {
+  console.log(
+    `${name.padEnd(46)} ${seconds.toFixed(2).padStart(7)} s ${Math.round(count / seconds)
+      .toLocaleString('en')
+      .padStart(12)} ${unit}/s`,
+  );
+}
+
+/** A made-up field along the main sequence, with parallaxes of one S/N (0: none). */
+function field(parallaxSnr: number): StarInputs {
+  const column = (value: (i: number) => number) => Float64Array.from({ length: STARS }, (_, i) => value(i));
+  const colour = (i: number) => (i % 97) / 60;
+  const distance_pc = (i: number) => 150 + (i % 89) * 12;
+  const v = (i: number) => 3 + colour(i) * 3.4 + 5 * Math.log10(distance_pc(i)) - 5;
+  return {
+    count: STARS,
+    bands: ['B', 'V'],
+    mag: [column(i => v(i) + colour(i)), column(v)],
+    sigma_mag: [column(() => 0.015), column(() => 0.01)],
+    parallax_mas: column(i => (parallaxSnr > 0 ? 1000 / distance_pc(i) : Number.NaN)),
+    parallaxSigma_mas: column(i => (parallaxSnr > 0 ? 1000 / distance_pc(i) / parallaxSnr : Number.NaN)),
+    reddening_EBV: column(() => Number.NaN),
+  };
+}
+
+function table(): Uint8Array {
+  const { mag, parallax_mas } = field(20);
+  const rows = ['id,ra,dec,Bmag,e_Bmag,Vmag,e_Vmag,parallax,parallax_error,pmra,pmdec,flag'];
+  for (let i = 0; i < STARS; i++) {
+    const place = `${(100 + (i % 400) / 100).toFixed(6)},${(Math.floor(i / 400) / 100).toFixed(6)}`;
+    rows.push(
+      `s${i},${place},${mag[0][i].toFixed(4)},0.012,${mag[1][i].toFixed(4)},0.010,${parallax_mas[i].toFixed(4)},0.05,1.250,-3.115,0`,
+    );
+  }
+  return new TextEncoder().encode(`${rows.join('\n')}\n`);
+}
+
+const model = buildModel(FIELD, { colour: { blue: 'B', red: 'V' }, band: 'V' });
+const out = makeOddsColumns(STARS);
+for (const [name, snr] of [
+  ['parallax S/N 30', 30],
+  ['parallax S/N 4', 4],
+  ['no parallax', 0],
+] as const) {
+  const inputs = field(snr);
+  const [, seconds] = timed(() => classifyStars(model, inputs, 0, STARS, out));
+  line(`class odds, B and V, ${name}`, seconds, STARS, 'stars');
+}
+
+const bytes = table();
+const input = { columns: {}, band: undefined, matchRadius_arcsec: 1, missing: [] };
+const [splitRows, splitSeconds] = timed(() =>
+  new TextDecoder()
+    .decode(bytes)
+    .split('\n')
+    .map(row => row.split(',').map(Number)),
+);
+const [{ frame }, readSeconds] = timed(() => readFrame('bench.csv', bytes, input));
+line('reading a table, 12 columns', readSeconds, STARS, 'rows');
+console.log(
+  `  split and Number over the same bytes takes ${(splitSeconds / readSeconds).toFixed(1)} times as long (${splitRows.length} rows)`,
+);
+
+const catalogue = new StarCatalogue(1);
+if (frame !== undefined) {
+  const [, first] = timed(() => catalogue.absorb(frame, 0));
+  line('first frame into stars', first, STARS, 'rows');
+  const [, second] = timed(() =>
+    catalogue.absorb({ ...frame, ids: frame.ids.map(() => frame.facts.object), hasIds: false }, 1),
+  );
+  line('second frame matched by position', second, STARS, 'rows');
+}
+
+const writer = new CellWriter(80, 24);
+const screen = (row: number, clock: string) =>
+  Array.from(
+    { length: 24 },
+    (_, y) => `${y === row ? '\x1b[7m' : ''}${'star '.repeat(15)}\x1b[0m${y === 0 ? clock : ''}`,
+  ).join('\n');
+const whole = writer.frame(screen(5, '02:41')).length;
+console.log(
+  `bytes: whole screen ${whole}, cursor one row down ${writer.frame(screen(6, '02:41')).length}, clock ${writer.frame(screen(6, '02:42')).length}`,
+);
