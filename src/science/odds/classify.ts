@@ -1,4 +1,4 @@
-import { BAND_COUNT, BAND_INDEX } from '../bands.js';
+import { BAND_INDEX } from '../bands.js';
 import { CLASS_COUNT, CLASS_INDEX } from '../classes.js';
 import type { ClassModel } from './model.js';
 import type { OddsColumns } from './odds-columns.js';
@@ -128,7 +128,7 @@ function extinctionRatioOf(model: ClassModel, fit: StarFit, band: number): numbe
   let best = 0;
   for (let slot = 1; slot < fit.survivors; slot++) if (fit.weight[slot] > fit.weight[best]) best = slot;
   const node = fit.survivors > 0 ? fit.node[best] : 0;
-  return model.extinctionRatio[node * BAND_COUNT + band];
+  return model.extinctionRatio[band][node];
 }
 
 function clearDistances(i: number, out: OddsColumns): void {

@@ -7,8 +7,7 @@
  * parallax makes it a Gaussian and H a closed form; a weak, negative or missing one is done on a grid.
  */
 export class DistanceTerm {
-  /** Results of the last `at`. */
-  density = 0;
+  /** Results of the last `momentsAt`. */
   modulusMean_mag = 0;
   modulusVariance_mag2 = 0;
 
@@ -38,24 +37,28 @@ export class DistanceTerm {
     else this.prepareGrid(parallax_mas, sigma_mas, variances);
   }
 
-  /**
-   * Evaluates H and the posterior of the modulus for a track node that wants the offset x. False (and nothing
-   * evaluated) when H is nil, or the misfit exceeds the limit.
-   */
-  at(x_mag: number, variance_mag2: number, group: number, limit_chi2: number): boolean {
-    if (!this.gaussian) return this.smoothed[group].lookUp(x_mag, this.gridStart_mag, this);
+  /** H for a node that wants the offset x; 0 where it is nil, or where the misfit exceeds the limit. */
+  densityAt(x_mag: number, variance_mag2: number, group: number, limit_chi2: number): number {
+    if (!this.gaussian) return this.smoothed[group].value(x_mag, this.gridStart_mag);
     const total = this.variance_mag2 + variance_mag2;
     const difference = x_mag - this.mean_mag;
     const misfit = (difference * difference) / total;
-    if (misfit > limit_chi2) return false;
-    this.density = (this.weight * Math.exp(-0.5 * misfit)) / Math.sqrt(TWO_PI * total);
-    const gain = this.variance_mag2 / total;
-    this.modulusMean_mag = this.mean_mag + gain * difference;
-    this.modulusVariance_mag2 = this.variance_mag2 * (1 - gain);
-    return true;
+    if (misfit > limit_chi2) return 0;
+    return (this.weight * Math.exp(-0.5 * misfit)) / Math.sqrt(TWO_PI * total);
   }
 
-  /** Offsets outside [0] to [1] are ruled out at this limit, for a track group of this variance. */
+  /** Mean and variance of the modulus for a node that wants the offset x. */
+  momentsAt(x_mag: number, variance_mag2: number, group: number): void {
+    if (!this.gaussian) {
+      this.smoothed[group].moments(x_mag, this.gridStart_mag, this);
+      return;
+    }
+    const gain = this.variance_mag2 / (this.variance_mag2 + variance_mag2);
+    this.modulusMean_mag = this.mean_mag + gain * (x_mag - this.mean_mag);
+    this.modulusVariance_mag2 = this.variance_mag2 * (1 - gain);
+  }
+
+  /** Offsets outside into[0] to into[1] are ruled out at this limit, for a track group of this variance. */
   range(variance_mag2: number, limit_chi2: number, into: Float64Array): void {
     if (this.gaussian) {
       const reach = Math.sqrt(limit_chi2 * (this.variance_mag2 + variance_mag2));
@@ -86,26 +89,27 @@ export class DistanceTerm {
 
   private prepareGrid(parallax_mas: number, sigma_mas: number, variances: Float64Array): void {
     const hasParallax = sigma_mas > 0 && !Number.isNaN(parallax_mas);
-    const nearest_pc =
-      hasParallax && parallax_mas + 7 * sigma_mas > 0 ? 1000 / (parallax_mas + 7 * sigma_mas) : 1;
+    const reach_mas = PARALLAX_REACH_SIGMA * sigma_mas;
+    const nearest_pc = hasParallax && parallax_mas + reach_mas > 0 ? 1000 / (parallax_mas + reach_mas) : 1;
     const limit_pc = FARTHEST_LENGTHS * this.lengthScale_pc;
     const farthest_pc =
-      hasParallax && parallax_mas > 7 * sigma_mas
-        ? Math.min(limit_pc, 1000 / (parallax_mas - 7 * sigma_mas))
+      hasParallax && parallax_mas > reach_mas
+        ? Math.min(limit_pc, 1000 / (parallax_mas - reach_mas))
         : limit_pc;
     const start = 5 * Math.log10(nearest_pc) - 5;
     const end = Math.max(start + GRID_STEP_MAG, 5 * Math.log10(farthest_pc) - 5);
     this.gridStart_mag = start;
     this.gridCount = Math.min(GRID_LIMIT, Math.ceil((end - start) / GRID_STEP_MAG) + 1);
     const norm = hasParallax ? 1 / (sigma_mas * Math.sqrt(TWO_PI)) : 1;
+    let distance_pc = nearest_pc;
     for (let i = 0; i < this.gridCount; i++) {
-      const distance_pc = 10 ** ((start + i * GRID_STEP_MAG + 5) / 5);
       const misfit = hasParallax ? (parallax_mas - 1000 / distance_pc) / sigma_mas : 0;
       this.prior[i] =
         volumeDensity(distance_pc, this.lengthScale_pc) * norm * Math.exp(-0.5 * misfit * misfit);
+      distance_pc *= GRID_STEP_FACTOR;
     }
     for (let group = 0; group < this.smoothed.length; group++) {
-      this.smoothed[group].fill(this.prior, this.gridCount, start, variances[group]);
+      this.smoothed[group].fill(this.prior, this.gridCount, variances[group]);
     }
   }
 }
@@ -119,64 +123,79 @@ function volumeDensity(distance_pc: number, lengthScale_pc: number): number {
 /** Above this parallax S/N the posterior in mu is a Gaussian to within a few per cent. */
 const GOOD_PARALLAX = 10;
 const GRID_STEP_MAG = 0.2;
+const GRID_STEP_FACTOR = 10 ** (GRID_STEP_MAG / 5);
 const GRID_LIMIT = 256;
 const FARTHEST_LENGTHS = 15;
+const PARALLAX_REACH_SIGMA = 6;
 const TWO_PI = 2 * Math.PI;
 /** The smoothing kernel and the table reach this many sigma. */
 const REACH_SIGMA = 4.5;
 const KERNEL_LIMIT = 64;
 
-/** The prior convolved with one Gaussian, with first and second moments of the modulus. */
+/** The prior convolved with one Gaussian of variance s^2. */
 class SmoothedTable {
   private margin = 0;
   private count = 0;
-  private readonly zeroth = new Float64Array(GRID_LIMIT + 2 * KERNEL_LIMIT);
-  private readonly first = new Float64Array(GRID_LIMIT + 2 * KERNEL_LIMIT);
-  private readonly second = new Float64Array(GRID_LIMIT + 2 * KERNEL_LIMIT);
+  private variance_mag2 = 0;
+  private readonly table = new Float64Array(GRID_LIMIT + 2 * KERNEL_LIMIT + 2);
   private readonly kernel = new Float64Array(KERNEL_LIMIT + 1);
 
-  fill(prior: Float64Array, priorCount: number, start_mag: number, variance_mag2: number): void {
+  fill(prior: Float64Array, priorCount: number, variance_mag2: number): void {
+    const { kernel, table } = this;
     const sigma = Math.sqrt(variance_mag2);
     const reach = Math.min(KERNEL_LIMIT, Math.ceil((REACH_SIGMA * sigma) / GRID_STEP_MAG));
     for (let k = 0; k <= reach; k++) {
       const z = (k * GRID_STEP_MAG) / sigma;
-      this.kernel[k] = (GRID_STEP_MAG * Math.exp(-0.5 * z * z)) / (sigma * Math.sqrt(TWO_PI));
+      kernel[k] = (GRID_STEP_MAG * Math.exp(-0.5 * z * z)) / (sigma * Math.sqrt(TWO_PI));
     }
+    this.variance_mag2 = variance_mag2;
     this.margin = reach;
     this.count = priorCount + 2 * reach;
-    for (let i = 0; i < this.count; i++) {
-      let sum = 0;
-      let sumMu = 0;
-      let sumMu2 = 0;
-      const from = Math.max(0, i - 2 * reach);
-      const to = Math.min(priorCount - 1, i);
-      for (let j = from; j <= to; j++) {
-        const weight = prior[j] * this.kernel[Math.abs(i - reach - j)];
-        const mu = start_mag + j * GRID_STEP_MAG;
-        sum += weight;
-        sumMu += weight * mu;
-        sumMu2 += weight * mu * mu;
+    table.fill(0, 0, this.count);
+    for (let j = 0; j < priorCount; j++) {
+      const p = prior[j];
+      if (p < SMALLEST) continue;
+      const centre = j + reach;
+      table[centre] += p * kernel[0];
+      for (let k = 1; k <= reach; k++) {
+        const share = p * kernel[k];
+        table[centre - k] += share;
+        table[centre + k] += share;
       }
-      this.zeroth[i] = sum;
-      this.first[i] = sumMu;
-      this.second[i] = sumMu2;
     }
   }
 
-  lookUp(x_mag: number, start_mag: number, into: DistanceTerm): boolean {
+  /** Between two entries on a straight line; 0 outside. */
+  value(x_mag: number, start_mag: number): number {
     const position = (x_mag - start_mag) / GRID_STEP_MAG + this.margin;
     const i = Math.floor(position);
-    if (!(i >= 0 && i + 1 < this.count)) return false;
-    const share = position - i;
-    const density = mix(this.zeroth, i, share);
-    if (!(density > 0)) return false;
-    into.density = density;
-    into.modulusMean_mag = mix(this.first, i, share) / density;
-    into.modulusVariance_mag2 = Math.max(0, mix(this.second, i, share) / density - into.modulusMean_mag ** 2);
-    return true;
+    if (!(i >= 0 && i + 1 < this.count)) return 0;
+    return this.table[i] + (position - i) * (this.table[i + 1] - this.table[i]);
+  }
+
+  /**
+   * A convolution with a Gaussian of variance s^2 knows its own posterior moments: mean = x + s^2 H'/H, variance =
+   * s^2 + s^4 (H''/H - (H'/H)^2) (Tweedie's formula; Robbins 1956), with H' and H'' from differences.
+   */
+  moments(x_mag: number, start_mag: number, into: DistanceTerm): void {
+    const { table, variance_mag2 } = this;
+    const position = (x_mag - start_mag) / GRID_STEP_MAG + this.margin;
+    const i = Math.max(1, Math.min(this.count - 3, Math.floor(position)));
+    const share = Math.max(0, Math.min(1, position - i));
+    const mix = (a: number, b: number) => a + share * (b - a);
+    const value = mix(table[i], table[i + 1]);
+    const slope = mix(table[i + 1] - table[i - 1], table[i + 2] - table[i]) / (2 * GRID_STEP_MAG);
+    const bend =
+      mix(table[i + 1] - 2 * table[i] + table[i - 1], table[i + 2] - 2 * table[i + 1] + table[i]) /
+      GRID_STEP_MAG ** 2;
+    const ratio = slope / value;
+    into.modulusMean_mag = x_mag + variance_mag2 * ratio;
+    into.modulusVariance_mag2 = Math.max(
+      0,
+      variance_mag2 + variance_mag2 ** 2 * (bend / value - ratio * ratio),
+    );
   }
 }
 
-function mix(table: Float64Array, i: number, share: number): number {
-  return table[i] + share * (table[i + 1] - table[i]);
-}
+/** Prior densities below this add nothing. */
+const SMALLEST = 1e-30;

@@ -40,9 +40,9 @@ export interface ClassModel {
   readonly groups: readonly NoiseGroup[];
   /** Intrinsic colour of each node in the axes; NaN first, then rising, within each group. */
   readonly colours: Float64Array;
-  /** Node columns over all bands: element node * BAND_COUNT + band index. */
-  readonly absMag: Float64Array;
-  readonly extinctionRatio: Float64Array;
+  /** One column over the nodes for each band, in the order of BANDS. */
+  readonly absMag: readonly Float64Array[];
+  readonly extinctionRatio: readonly Float64Array[];
   readonly classIndex: Uint8Array;
   /** Distinct intrinsic scatters, mag^2. */
   readonly scatterVariances_mag2: readonly number[];
@@ -57,13 +57,8 @@ export interface ClassModel {
 export function buildModel(field: FieldPrior, axes: DiagramAxes): ClassModel {
   const tracks = readTracks();
   const { nodes, groups, colours, scatterVariances_mag2 } = arrange(makeNodes(tracks), axes);
-  const columns = (of: (node: Node) => Float64Array) => {
-    const all = new Float64Array(nodes.length * BAND_COUNT);
-    nodes.forEach((node, i) => {
-      all.set(of(node), i * BAND_COUNT);
-    });
-    return all;
-  };
+  const columns = (of: (node: Node) => Float64Array) =>
+    Array.from({ length: BAND_COUNT }, (_, band) => Float64Array.from(nodes, node => of(node)[band]));
   const cluster = hasCluster(field);
   // Around a cluster lies the ordinary field; without one the population is the field's own.
   const fieldDensity = populationDensities(nodes, cluster ? 'field' : field.population, field);

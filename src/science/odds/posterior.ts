@@ -52,13 +52,10 @@ function predictMagnitudes(
     let sum2 = 0;
     for (let slot = 0; slot < fit.survivors; slot++) {
       const node = fit.node[slot];
-      const absMag = model.absMag[node * BAND_COUNT + band];
+      const absMag = model.absMag[band][node];
       if (Number.isNaN(absMag)) continue;
       const w = fit.weight[slot];
-      const m =
-        absMag +
-        fit.offset_mag[slot] +
-        fit.extinction_AV[slot] * model.extinctionRatio[node * BAND_COUNT + band];
+      const m = absMag + fit.offset_mag[slot] + fit.extinction_AV[slot] * model.extinctionRatio[band][node];
       weight += w;
       sum += w * m;
       sum2 += w * (m * m + model.nodes[node].bandScatter_mag ** 2);
