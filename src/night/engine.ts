@@ -45,6 +45,8 @@ export class NightEngine implements NightState {
   private readonly log = new FrameLog();
   private readonly changes = new ChangeSearch();
   private capacity = 1024;
+  /** Bands the model was built for. */
+  private modelBands = '';
 
   constructor(readonly profile: Profile) {
     this.catalogue = new StarCatalogue(profile.input.matchRadius_arcsec);
@@ -120,13 +122,9 @@ export class NightEngine implements NightState {
     this.ensureRoom();
     this.inputs = this.readInputs();
     this.positions = this.readPositions();
-    const axes = chooseAxes(
-      this.catalogue.bands,
-      this.profile.bands.map(({ band }) => band),
-    );
-    const sameAxes = JSON.stringify(axes) === JSON.stringify(this.model.axes);
-    if (!sameAxes) this.model = this.modelFor();
-    const stars = sameAxes ? touched : everyStar(this.catalogue.count);
+    const sameBands = this.catalogue.bands.join() === this.modelBands;
+    if (!sameBands) this.model = this.modelFor();
+    const stars = sameBands ? touched : everyStar(this.catalogue.count);
     classifySome(this.model, this.inputs, stars, this.odds);
     const changed = this.changes.search(this.catalogue, this.frames);
     const evidence = new EvidenceMaker(this, changed);
@@ -134,11 +132,13 @@ export class NightEngine implements NightState {
   }
 
   private modelFor(): ClassModel {
+    const { bands } = this.catalogue;
     const axes = chooseAxes(
-      this.catalogue.bands,
+      bands,
       this.profile.bands.map(({ band }) => band),
     );
-    return buildModel(this.profile.field, axes);
+    this.modelBands = bands.join();
+    return buildModel(this.profile.field, axes, bands);
   }
 
   private readInputs(): StarInputs {

@@ -69,7 +69,7 @@ function table(): Uint8Array {
   return new TextEncoder().encode(`${rows.join('\n')}\n`);
 }
 
-const model = buildModel(FIELD, { colour: { blue: 'B', red: 'V' }, band: 'V' });
+const model = buildModel(FIELD, { colour: { blue: 'B', red: 'V' }, band: 'V' }, ['B', 'V']);
 const out = makeOddsColumns(STARS);
 for (const [name, snr] of [
   ['parallax S/N 30', 30],

@@ -68,7 +68,7 @@ export function classifyAll(
 ): readonly Classified[] {
   const inputs = starInputs(stars, bands);
   const columns = makeOddsColumns(stars.length);
-  classifyStars(buildModel(field, axes), inputs, 0, stars.length, columns);
+  classifyStars(buildModel(field, axes, bands), inputs, 0, stars.length, columns);
   return stars.map((_, i) => {
     const row = columns.odds.subarray(i * CLASS_COUNT, (i + 1) * CLASS_COUNT);
     return {

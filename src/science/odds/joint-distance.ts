@@ -73,25 +73,21 @@ export class JointDistance {
     let total = 0;
     let first = 0;
     let second = 0;
-    const add = (weight: number, mean: number, meanVariance: number) => {
-      total += weight;
-      first += weight * mean;
-      second += weight * (meanVariance + mean * mean);
-    };
     for (const { share, brighter_mag } of group.branches) {
       const offset = x + brighter_mag;
       const weight = share * inField * this.term.densityAt(offset, spread, group.scatterGroup, limit_chi2);
       if (weight > 0) {
         this.term.momentsAt(offset, spread, group.scatterGroup);
-        add(weight, this.term.modulusMean_mag, this.term.modulusVariance_mag2);
+        const mean = this.term.modulusMean_mag;
+        total += weight;
+        first += weight * mean;
+        second += weight * (this.term.modulusVariance_mag2 + mean * mean);
       }
-      if (inCluster > 0) {
-        add(
-          share * inCluster * this.clusterDensityAt(offset, spread, limit_chi2),
-          modulus_mag,
-          modulusSigma_mag ** 2,
-        );
-      }
+      if (inCluster === 0) continue;
+      const member = share * inCluster * this.clusterDensityAt(offset, spread, limit_chi2);
+      total += member;
+      first += member * modulus_mag;
+      second += member * (modulusSigma_mag * modulusSigma_mag + modulus_mag * modulus_mag);
     }
     this.modulus_mag = first / total;
     this.modulusVariance_mag2 = Math.max(0, second / total - this.modulus_mag ** 2);

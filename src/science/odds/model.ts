@@ -54,9 +54,16 @@ export interface ClassModel {
   readonly clusterCounts: (mag: number) => number;
 }
 
-export function buildModel(field: FieldPrior, axes: DiagramAxes): ClassModel {
+/**
+ * Builds the model of a field for stars measured in the given bands; stars may lack some of them, and have others at
+ * the cost of a coarser fit there.
+ */
+export function buildModel(field: FieldPrior, axes: DiagramAxes, bands: readonly Band[]): ClassModel {
   const tracks = readTracks();
-  const { nodes, groups, colours, scatterVariances_mag2 } = arrange(makeNodes(tracks), axes);
+  const { nodes, groups, colours, scatterVariances_mag2 } = arrange(
+    makeNodes(tracks, coloursOf(axes, bands)),
+    axes,
+  );
   const columns = (of: (node: Node) => Float64Array) =>
     Array.from({ length: BAND_COUNT }, (_, band) => Float64Array.from(nodes, node => of(node)[band]));
   const cluster = hasCluster(field);
@@ -86,6 +93,14 @@ export function buildModel(field: FieldPrior, axes: DiagramAxes): ClassModel {
     fieldCounts: counts.inField(fieldDensity),
     clusterCounts: counts.inCluster(clusterDensity),
   };
+}
+
+/** The axes' colour, and every other band against its red one. */
+function coloursOf({ colour }: DiagramAxes, bands: readonly Band[]): readonly Colour[] {
+  return [
+    colour,
+    ...bands.filter(band => band !== colour.red).map(band => ({ blue: band, red: colour.red })),
+  ];
 }
 
 /** Sorted by noise group, then by colour, so that a star meets only the nodes near its colour. */

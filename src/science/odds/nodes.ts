@@ -1,4 +1,4 @@
-import { BAND_COUNT, BAND_INDEX, BANDS } from '../bands.js';
+import { BAND_COUNT, BAND_INDEX, BANDS, type Colour } from '../bands.js';
 import { CLASS_INDEX, type StarClass } from '../classes.js';
 import { ExtinctionLaw } from '../extinction.js';
 import { SUBDWARF_FEH, subdwarfOffset_mag } from '../tracks/subdwarfs.js';
@@ -93,11 +93,18 @@ const BRANCHES: Readonly<Partial<Record<StarClass, readonly Branch[]>>> = {
 
 const SINGLE: readonly Branch[] = [{ share: 1, brighter_mag: 0 }];
 
-/** Resamples every track into nodes. */
-export function makeNodes(tracks: readonly Track[]): readonly Node[] {
+/** Colours that the spacing of nodes has to resolve when nothing is known of a night's bands. */
+const USUAL_COLOURS: readonly Colour[] = [
+  { blue: 'B', red: 'V' },
+  { blue: 'BP', red: 'RP' },
+  { blue: 'g', red: 'r' },
+];
+
+/** Resamples every track into nodes, finely enough for the given colours. */
+export function makeNodes(tracks: readonly Track[], colours = USUAL_COLOURS): readonly Node[] {
   const law = new ExtinctionLaw();
   return tracks.flatMap(track => {
-    const samples = resample(bridgeGaps(track.points));
+    const samples = resample(bridgeGaps(track.points), colours);
     return samples.map(({ point, step_mag, step_subtypes }) =>
       makeNode(track, point, densityOf(track, point, step_mag, step_subtypes, samples.length), law),
     );
@@ -154,12 +161,12 @@ interface Sample {
 }
 
 /** Points at even small steps along the track; each stands for the stretch of track around it. */
-function resample(points: readonly TrackPoint[]): readonly Sample[] {
+function resample(points: readonly TrackPoint[], colours: readonly Colour[]): readonly Sample[] {
   const samples: Sample[] = [];
   for (let i = 0; i + 1 < points.length; i++) {
     const from = points[i];
     const to = points[i + 1];
-    const pieces = Math.max(1, Math.ceil(separation(from, to)));
+    const pieces = Math.max(1, Math.ceil(separation(from, to, colours)));
     for (let piece = 0; piece < pieces; piece++) {
       samples.push({
         point: between(from, to, (piece + 0.5) / pieces),
@@ -172,13 +179,9 @@ function resample(points: readonly TrackPoint[]): readonly Sample[] {
 }
 
 /** Distance of two points in units of the allowed steps. */
-function separation(from: TrackPoint, to: TrackPoint): number {
+function separation(from: TrackPoint, to: TrackPoint, colours: readonly Colour[]): number {
   let colour = 0;
-  for (const [blue, red] of [
-    ['B', 'V'],
-    ['BP', 'RP'],
-    ['g', 'r'],
-  ] as const) {
+  for (const { blue, red } of colours) {
     const change =
       to.absMag[BAND_INDEX[blue]] -
       to.absMag[BAND_INDEX[red]] -

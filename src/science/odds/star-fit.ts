@@ -11,7 +11,7 @@ const MISFIT_LIMIT_CHI2 = 25;
 /** Misfit in colour and distance together beyond which a node is dropped. */
 const JOINT_LIMIT_CHI2 = 40;
 /** Nodes with less of the weight than this, against the best one so far, are not kept. */
-const NEGLIGIBLE = 1e-8;
+const NEGLIGIBLE = 1e-6;
 /** An offset is stretched by less than this many sigma of the extinction prior. */
 const EXTINCTION_SLACK_SIGMA = 7;
 /** No colour changes by more than this per magnitude of A_V (U-yP1: 1.2; a colour of the axes: far less). */
@@ -163,13 +163,15 @@ export class StarFit {
       const x = t1 / t0;
       const chi2 = rr - gain * r1 * r1 - t1 * x;
       if (chi2 > MISFIT_LIMIT_CHI2 || !distance.weigh(group, k, x, 1 / t0, JOINT_LIMIT_CHI2 - chi2)) continue;
-      const likelihood =
-        Math.exp(-0.5 * chi2) *
+      const norm =
         Math.sqrt(product / (t0 * (1 + priorAVVariance * s2))) *
         COLOUR_NORM[used - silent - 1] *
         FLAT_NORM[silent];
+      const least = NEGLIGIBLE * this.largest;
+      if (norm * distance.density < least) continue;
+      const likelihood = norm * Math.exp(-0.5 * chi2);
       const density = likelihood * distance.density;
-      if (density < NEGLIGIBLE * this.largest) continue;
+      if (density < least) continue;
       this.largest = Math.max(this.largest, density);
       total += this.keep(
         group,
