@@ -78,7 +78,7 @@ export function frameTable(exposure: Exposure, stars: readonly DemoStar[], rando
     `# FWHM = ${exposure.fwhm_arcsec.toFixed(2)}`,
     `# AIRMASS = ${exposure.airmass.toFixed(3)}`,
     `# ZP = ${(zeroPoint - EXTINCTION[band] * exposure.airmass + random.normal(0, 0.006)).toFixed(3)}`,
-    `# SKY = ${exposure.sky_magPerArcsec2.toFixed(2)}`,
+    `# SKYMAG = ${exposure.sky_magPerArcsec2.toFixed(2)}`,
     'ra,dec,mag,mag_error,flag',
   ];
   for (const star of stars) {

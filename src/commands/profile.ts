@@ -1,5 +1,5 @@
 import { bandZeroPoint_mag } from '../follow/exposure/imager.js';
-import { faintestIn_mag } from '../follow/exposure/limits.js';
+import { darkZenith, faintestIn_mag } from '../follow/exposure/limits.js';
 import { ExposureAdviser } from '../follow/exposure/suggest.js';
 import type { ExposureSuggestion } from '../follow/exposure/suggestion.js';
 import type { Profile } from '../follow/settings.js';
@@ -73,12 +73,7 @@ function setupLines(profile: Profile): string[] {
     mag: new Float64Array(BAND_COUNT).fill(TEST_MAG),
     sigma_mag: new Float64Array(BAND_COUNT).fill(0.05),
   };
-  const conditions = {
-    airmass: 1,
-    seeing_arcsec: profile.site.seeing_arcsec,
-    siteHeight_m: profile.site.height_m,
-    cloud_mag: 0,
-  };
+  const conditions = darkZenith(profile);
   return profile.setups.map((setup, i) => {
     const suggestion = adviser.suggest(star, conditions)[i];
     return `${setup.name}: S/N ${setup.targetSnr} on a star of magnitude ${TEST_MAG}: ${exposureWords(suggestion)}`;

@@ -1,15 +1,12 @@
 import { ExposureAdviser } from '../follow/exposure/suggest.js';
-import type { Conditions as ExposureConditions, ExposureSuggestion } from '../follow/exposure/suggestion.js';
-import type { TargetWindow } from '../follow/sky/window.js';
+import type { Conditions, ExposureSuggestion } from '../follow/exposure/suggestion.js';
+import { skyBrightness_magPerArcsec2 } from '../follow/sky/sky-light.js';
+import type { StarTonight, TargetWindow } from '../follow/sky/window.js';
+import type { Band } from '../science/bands.js';
 import { PosteriorReader } from '../science/odds/index.js';
-import { zenithSeeing_arcsec } from '../science/photometry/seeing.js';
-import { median } from '../science/statistics.js';
+import { MeasuredConditions } from './measured-conditions.js';
 import type { NightState } from './night-state.js';
 import { SkyNow } from './sky-now.js';
-import type { FrameSummary } from './view.js';
-
-/** Frames whose seeing counts as tonight's: the newest few. */
-const RECENT_FRAMES = 4;
 
 /** Exposures and window of one star at one time. */
 export interface FollowUp {
@@ -17,12 +14,19 @@ export interface FollowUp {
   readonly window: TargetWindow;
 }
 
-/** Works out what observing a star would take, with tonight's seeing. */
+/** What was worked out for one state of the stars, and serves until the next frame. */
+interface Desk {
+  readonly inputs: unknown;
+  readonly reader: PosteriorReader;
+  readonly measured: MeasuredConditions;
+  readonly skyOffsets: Map<Band, number>;
+}
+
+/** Works out what observing a star would take, under tonight's measured seeing, transparency and sky. */
 export class FollowUpDesk {
   readonly sky: SkyNow;
   private readonly adviser: ExposureAdviser;
-  private reader: PosteriorReader | undefined;
-  private readFor: unknown;
+  private desk: Desk | undefined;
 
   constructor(private readonly night: NightState) {
     this.sky = new SkyNow(night.profile);
@@ -30,54 +34,64 @@ export class FollowUpDesk {
   }
 
   of(star: number, now_ms: number): FollowUp {
-    const { positions, profile } = this.night;
-    const [ra, dec] = [positions.ra_deg[star], positions.dec_deg[star]];
+    const { positions } = this.night;
     const sky = this.sky.at(now_ms);
-    const tonight = sky.follow(ra, dec, now_ms);
-    // A star that is not up yet is worked out for the airmass at which it may be begun.
-    const up = tonight.spans.some(([from, until]) => from <= now_ms && now_ms < until);
-    const exposures = this.adviser.suggest(this.posterior().predicted(star), {
-      ...this.conditions(),
-      airmass: up ? tonight.airmassNow : profile.site.maxAirmass,
-    });
+    const tonight = sky.follow(positions.ra_deg[star], positions.dec_deg[star], now_ms);
+    const conditions = this.conditionsFor(star, tonight);
+    const exposures = this.adviser.suggest(this.current().reader.predicted(star), conditions);
     const first = exposures.find(exposure => exposure.possible);
     return { exposures, window: sky.windowFor(tonight, first?.total_s ?? 0) };
   }
 
-  /** Seeing at the zenith from the newest frames, the profile's until there are any. */
-  seeing_arcsec(): number {
-    const measured = this.night.frames
-      .filter(frame => frame.fwhm_arcsec > 0)
-      .slice(-RECENT_FRAMES)
-      .map(frame =>
-        zenithSeeing_arcsec(
-          frame.fwhm_arcsec,
-          Number.isNaN(frame.airmass) ? 1 : frame.airmass,
-          this.wavelength_nm(frame),
-        ),
-      );
-    return measured.length === 0 ? this.night.profile.site.seeing_arcsec : median(measured);
+  /** Tonight's seeing, cloud and sky from the frames. */
+  measured(): MeasuredConditions {
+    return this.current().measured;
   }
 
-  private conditions(): Omit<ExposureConditions, 'airmass'> {
+  /** A star that is not up yet is worked out for the time and airmass at which it may be begun. */
+  private conditionsFor(star: number, tonight: StarTonight): Conditions {
+    const { positions, profile } = this.night;
+    const { now_ms, spans } = tonight;
+    const next = spans.find(([, until]) => now_ms < until);
+    const isUp = next !== undefined && next[0] <= now_ms;
+    const when_ms = next === undefined || isUp ? now_ms : next[0];
+    const geometry = this.sky.at(now_ms).geometryAt(positions.ra_deg[star], positions.dec_deg[star], when_ms);
+    const bandV = profile.bands.find(entry => entry.band === 'V');
+    const { measured } = this.current();
     return {
-      seeing_arcsec: this.seeing_arcsec(),
-      siteHeight_m: this.night.profile.site.height_m,
-      cloud_mag: 0,
+      airmass: isUp ? tonight.airmassNow : profile.site.maxAirmass,
+      seeing_arcsec: measured.seeing_arcsec(),
+      siteHeight_m: profile.site.height_m,
+      cloud_mag: measured.cloud_mag(),
+      sky_magPerArcsec2: (band, wavelength_nm) =>
+        skyBrightness_magPerArcsec2(geometry, band, wavelength_nm, bandV) + this.skyOffset(band.band),
     };
   }
 
-  private wavelength_nm(frame: FrameSummary): number {
-    const [band] = frame.bands;
-    return (band === undefined ? undefined : this.adviser.passbands.get(band)?.wavelength_nm) ?? 550;
+  private skyOffset(band: Band): number {
+    const { measured, skyOffsets } = this.current();
+    let offset = skyOffsets.get(band);
+    if (offset === undefined) {
+      // Any star of the field will do: the sky is the same over it.
+      const { ra_deg, dec_deg } = this.night.positions;
+      offset = measured.skyOffset_mag(band, time_ms =>
+        this.sky.at(time_ms).geometryAt(ra_deg[0], dec_deg[0], time_ms),
+      );
+      skyOffsets.set(band, offset);
+    }
+    return offset;
   }
 
-  /** One reader per state of the stars: its buffers are large. */
-  private posterior(): PosteriorReader {
-    if (this.reader === undefined || this.readFor !== this.night.inputs) {
-      this.readFor = this.night.inputs;
-      this.reader = new PosteriorReader(this.night.model, this.night.inputs);
+  private current(): Desk {
+    const { model, inputs, frames, profile } = this.night;
+    if (this.desk?.inputs !== inputs) {
+      this.desk = {
+        inputs,
+        reader: new PosteriorReader(model, inputs),
+        measured: new MeasuredConditions(frames, profile, this.adviser.passbands),
+        skyOffsets: new Map(),
+      };
     }
-    return this.reader;
+    return this.desk;
   }
 }

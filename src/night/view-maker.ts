@@ -95,10 +95,11 @@ export class ViewMaker {
     const { night } = this.desk.sky.at(now_ms);
     const timed = this.night.frames.filter(frame => !Number.isNaN(frame.mid_ms));
     const newest = timed.at(-1);
+    const measured = this.desk.measured();
     return {
-      seeing_arcsec: this.desk.seeing_arcsec(),
-      seeingMeasured: timed.some(frame => frame.fwhm_arcsec > 0),
-      zeroPointDrop_mag: this.zeroPointDrop(),
+      seeing_arcsec: measured.seeing_arcsec(),
+      seeingMeasured: measured.isSeeingMeasured,
+      cloud_mag: measured.cloud_mag(),
       sky_magPerArcsec2: newest?.sky_magPerArcsec2 ?? Number.NaN,
       sunAltitude_deg: ephemeris.sunAltitude_deg(now_ms),
       moonAltitude_deg: ephemeris.moonAltitude_deg(now_ms),
@@ -107,17 +108,6 @@ export class ViewMaker {
       darkUntil_ms: night.dark.dawn_ms,
       darkWords: darkWords(night),
     };
-  }
-
-  private zeroPointDrop(): number {
-    const frames = this.night.frames.filter(frame => !Number.isNaN(frame.mid_ms + frame.zeroPoint_mag));
-    const newest = frames.at(-1);
-    if (newest === undefined) return Number.NaN;
-    const same = frames.filter(frame => frame.bands[0] === newest.bands[0]);
-    return (
-      same.reduce((best, frame) => Math.max(best, frame.zeroPoint_mag), newest.zeroPoint_mag) -
-      newest.zeroPoint_mag
-    );
   }
 }
 

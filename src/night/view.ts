@@ -67,8 +67,8 @@ export interface Conditions {
   /** Seeing at the zenith from the newest frames, else the profile's. */
   readonly seeing_arcsec: number;
   readonly seeingMeasured: boolean;
-  /** Newest frame's zero point below the best of the night in its band, magnitudes. */
-  readonly zeroPointDrop_mag: number;
+  /** Transparency lost against the best of the night, as it enters the exposures; 0 when clear or not known. */
+  readonly cloud_mag: number;
   readonly sky_magPerArcsec2: number;
   readonly sunAltitude_deg: number;
   readonly moonAltitude_deg: number;

@@ -261,7 +261,7 @@ export function nightView(revision = 7, frames = 24): NightView {
     conditions: {
       seeing_arcsec: 1.6,
       seeingMeasured: true,
-      zeroPointDrop_mag: 0.12,
+      cloud_mag: 0.12,
       sky_magPerArcsec2: 21.2,
       sunAltitude_deg: -43,
       moonAltitude_deg: -8,

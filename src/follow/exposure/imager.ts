@@ -13,8 +13,6 @@ import {
 } from '../../science/photometry/moffat.js';
 import { scintillation_s } from '../../science/photometry/scintillation.js';
 import { seeing_arcsec } from '../../science/photometry/seeing.js';
-import { altitudeOfAirmass_deg } from '../../science/sky/airmass.js';
-import { darkSky_magPerArcsec2 } from '../../science/sky/night-sky.js';
 import type { BandSettings, ImagerSetup, Telescope } from '../settings.js';
 import type { Rates } from './plan-exposure.js';
 import type { Conditions } from './suggestion.js';
@@ -36,8 +34,8 @@ export function bandZeroPoint_mag(telescope: Telescope, band: BandSettings, pass
 }
 
 /**
- * Rates in the aperture that is best against the sky, for a Moffat image. The sky is the profile's dark sky at the
- * airmass; the background is taken as well known (many pixels).
+ * Rates in the aperture that is best against the sky, for a Moffat image. The
+ * background is taken as well known (many pixels).
  */
 export function imagerRates(
   telescope: Telescope,
@@ -56,11 +54,7 @@ export function imagerRates(
     band.extinction_magPerAirmass,
     conditions.airmass,
   );
-  const sky = darkSky_magPerArcsec2(
-    band.darkSky_magPerArcsec2,
-    band.extinction_magPerAirmass,
-    90 - altitudeOfAirmass_deg(conditions.airmass),
-  );
+  const sky = conditions.sky_magPerArcsec2(band, passband.wavelength_nm);
   const background = skyRate_ePerSPerPixel(sky, zeroPoint, detector.pixel_arcsec ** 2) + detector.dark_ePerS;
   const pixel_fwhm = detector.pixel_arcsec / fwhm_arcsec;
   return {

@@ -2,8 +2,6 @@ import type { Passband } from '../../science/passbands.js';
 import { collectingArea_cm2 } from '../../science/photometry/count-rate.js';
 import { SMALL_TELESCOPE_BETA, slitFraction } from '../../science/photometry/moffat.js';
 import { seeing_arcsec } from '../../science/photometry/seeing.js';
-import { altitudeOfAirmass_deg } from '../../science/sky/airmass.js';
-import { darkSky_magPerArcsec2 } from '../../science/sky/night-sky.js';
 import type { BandSettings, SpectrographSetup, Telescope } from '../settings.js';
 import type { Rates } from './plan-exposure.js';
 import type { Conditions } from './suggestion.js';
@@ -41,11 +39,7 @@ export function spectrographRates(
     10 ** (-0.4 * (settings.extinction_magPerAirmass * conditions.airmass + conditions.cloud_mag));
   const slit = slitFraction(setup.slit_arcsec / fwhm_arcsec, SMALL_TELESCOPE_BETA);
   const perPixel_ePerS = flux * absorbed * collected * slit * dispersion_APerPixel;
-  const sky = darkSky_magPerArcsec2(
-    settings.darkSky_magPerArcsec2,
-    settings.extinction_magPerAirmass,
-    90 - altitudeOfAirmass_deg(conditions.airmass),
-  );
+  const sky = conditions.sky_magPerArcsec2(settings, passband.wavelength_nm);
   // The sky fills the slit: no loss, and its brightness is as seen from the ground.
   const skyPerPixel_ePerS =
     passband.photonFlux *

@@ -1,3 +1,5 @@
+import type { BandSettings } from '../settings.js';
+
 /** What a setup would need to reach its S/N on one star. */
 export interface ExposureSuggestion {
   readonly setup: string;
@@ -26,4 +28,6 @@ export interface Conditions {
   readonly siteHeight_m: number;
   /** Transparency lost to cloud, magnitudes. */
   readonly cloud_mag: number;
+  /** Brightness of the sky at the target in a band of the profile, mag/arcsec^2. */
+  readonly sky_magPerArcsec2: (band: BandSettings, wavelength_nm: number) => number;
 }

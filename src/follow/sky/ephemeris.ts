@@ -73,6 +73,11 @@ export class Ephemeris {
     return Astronomy.Illumination(Astronomy.Body.Moon, timeOf(time_ms)).phase_fraction;
   }
 
+  /** Angle Sun-Moon-Earth: 0 full, 180 new. */
+  moonPhaseAngle_deg(time_ms: number): number {
+    return Astronomy.Illumination(Astronomy.Body.Moon, timeOf(time_ms)).phase_angle;
+  }
+
   /** Direction of the Moon from the site itself (parallax up to a degree), J2000. */
   moonDirection(time_ms: number): Direction {
     const place = Astronomy.Equator(Astronomy.Body.Moon, timeOf(time_ms), this.observer, false, true);

@@ -2,6 +2,7 @@ import { airmass, altitudeOfAirmass_deg } from '../../science/sky/airmass.js';
 import type { Site } from '../settings.js';
 import { type Direction, directionOf, type Ephemeris } from './ephemeris.js';
 import { clock, type Night } from './night-of.js';
+import type { SkyGeometry } from './sky-light.js';
 
 const RADIAN = Math.PI / 180;
 const STEP_MS = 5 * 60_000;
@@ -32,6 +33,13 @@ interface Moment {
   readonly now_ms: number;
   readonly zenith: Direction;
   readonly toApparent: (direction: Direction) => Direction;
+  /** Moon and Sun, worked out when first needed. */
+  lights?: {
+    readonly moon: Direction;
+    readonly moonZenithDistance_deg: number;
+    readonly phaseAngle_deg: number;
+    readonly sunAltitude_deg: number;
+  };
 }
 
 /**
@@ -96,6 +104,24 @@ export class NightSky {
       upUntil_ms,
       startBy_ms: fits ? startBy : Number.NaN,
       blockedBy: fits ? '' : this.whyTooShort(upFrom_ms, upUntil_ms, now_ms, wall_s),
+    };
+  }
+
+  /** Where a target, the Moon and the Sun stand at a time. */
+  geometryAt(ra_deg: number, dec_deg: number, time_ms: number): SkyGeometry {
+    const moment = this.momentOf(time_ms);
+    moment.lights ??= {
+      moon: this.ephemeris.moonDirection(time_ms),
+      moonZenithDistance_deg: 90 - this.ephemeris.moonAltitude_deg(time_ms),
+      phaseAngle_deg: this.ephemeris.moonPhaseAngle_deg(time_ms),
+      sunAltitude_deg: this.ephemeris.sunAltitude_deg(time_ms),
+    };
+    const direction = moment.toApparent(directionOf(ra_deg, dec_deg));
+    const { moon, ...lights } = moment.lights;
+    return {
+      ...lights,
+      separation_deg: separation_deg(moon, direction),
+      targetZenithDistance_deg: 90 - altitudeIn(moment.zenith, direction),
     };
   }
 

@@ -3,7 +3,7 @@ import { Grid } from '../terminal/grid.js';
 import { dim, type Line, plain, putParts, widthOf } from './parts.js';
 import { clockText, leftText, signed } from './text.js';
 
-/** A fall of the zero point by this much is cloud, not noise (judgement). */
+/** A loss of transparency by this much is cloud, not noise (judgement). */
 const CLOUD_MAG = 0.15;
 const GAP = '   ';
 
@@ -20,16 +20,16 @@ export function conditionsStrip(conditions: Conditions | undefined, now_ms: numb
 }
 
 function piecesOf(conditions: Conditions, now_ms: number): readonly Line[] {
-  const { seeing_arcsec, zeroPointDrop_mag, sky_magPerArcsec2 } = conditions;
+  const { seeing_arcsec, cloud_mag, sky_magPerArcsec2 } = conditions;
   const pieces: Line[] = [darkness(conditions, now_ms)];
   if (!Number.isNaN(seeing_arcsec)) {
     const source = conditions.seeingMeasured ? '' : ' assumed';
     pieces.push([dim('seeing '), plain(`${seeing_arcsec.toFixed(1)}"${source}`)]);
   }
-  if (!Number.isNaN(zeroPointDrop_mag)) {
-    const cloudy = zeroPointDrop_mag >= CLOUD_MAG;
-    const text = `${signed(-zeroPointDrop_mag, 2)} mag${cloudy ? ' cloud?' : ''}`;
-    pieces.push([dim('zero point '), cloudy ? { text, style: { colour: 'warning' } } : plain(text)]);
+  if (cloud_mag > 0) {
+    const cloudy = cloud_mag >= CLOUD_MAG;
+    const text = `${signed(-cloud_mag, 2)} mag${cloudy ? ' cloud?' : ''}`;
+    pieces.push([dim('transparency '), cloudy ? { text, style: { colour: 'warning' } } : plain(text)]);
   }
   if (!Number.isNaN(sky_magPerArcsec2))
     pieces.push([dim('sky '), plain(`${sky_magPerArcsec2.toFixed(1)} mag/"2`)]);
