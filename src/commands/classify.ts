@@ -36,7 +36,7 @@ export async function classifyCommand(
     if (isRefusal(bytes)) problems.push(makeProblem(bytes.code, safeText(name), 0, bytes.seen));
     else read.push({ name, bytes });
   }
-  for (const { problems: found } of engine.absorbAll(read)) problems.push(...found);
+  for (const { problems: found } of await engine.absorbAll(read)) problems.push(...found);
   for (const problem of problems) io.err(`${formatProblem(problem)}\n`);
   await printStars(engine, options, io);
   return problems.some(problem => problem.cost === 'file') ? EXIT.someUnreadable : EXIT.ok;

@@ -13,6 +13,7 @@ import {
 } from '../science/odds/index.js';
 import { chooseAxes } from './axes.js';
 import { ChangeSearch } from './change-search.js';
+import { classifyParallel } from './classify-parallel.js';
 import { EvidenceMaker } from './evidence.js';
 import { FlagBook } from './flag-book.js';
 import { FrameLog } from './frame-log.js';
@@ -71,8 +72,10 @@ export class NightEngine implements NightState {
     return taken;
   }
 
-  /** Reads many files and follows once at the end: for a night that is already over. */
-  absorbAll(files: Iterable<{ readonly name: string; readonly bytes: Uint8Array }>): FileOutcome[] {
+  /** Reads many files and follows once at the end, on two threads: for a night that is already over. */
+  async absorbAll(
+    files: Iterable<{ readonly name: string; readonly bytes: Uint8Array }>,
+  ): Promise<readonly FileOutcome[]> {
     const outcomes: FileOutcome[] = [];
     let last = -1;
     for (const { name, bytes } of files) {
@@ -80,7 +83,10 @@ export class NightEngine implements NightState {
       if (taken.frame >= 0) last = taken.frame;
       outcomes.push(taken);
     }
-    if (last >= 0) this.follow(last, everyStar(this.catalogue.count));
+    if (last < 0) return outcomes;
+    this.readStars();
+    await classifyParallel(this.model, this.inputs, this.odds);
+    this.judge(everyStar(this.catalogue.count), last);
     return outcomes;
   }
 
@@ -119,13 +125,23 @@ export class NightEngine implements NightState {
 
   /** Classifies and judges the stars that a frame touched. */
   private follow(frame: number, touched: Uint32Array): void {
+    const sameBands = this.readStars();
+    const stars = sameBands ? touched : everyStar(this.catalogue.count);
+    classifySome(this.model, this.inputs, stars, this.odds);
+    this.judge(stars, frame);
+  }
+
+  /** Takes the stars' means over from the catalogue; false when their bands need another model. */
+  private readStars(): boolean {
     this.ensureRoom();
     this.inputs = this.readInputs();
     this.positions = this.readPositions();
     const sameBands = this.catalogue.bands.join() === this.modelBands;
     if (!sameBands) this.model = this.modelFor();
-    const stars = sameBands ? touched : everyStar(this.catalogue.count);
-    classifySome(this.model, this.inputs, stars, this.odds);
+    return sameBands;
+  }
+
+  private judge(stars: Uint32Array, frame: number): void {
     const changed = this.changes.search(this.catalogue, this.frames);
     const evidence = new EvidenceMaker(this, changed);
     for (const star of stars) this.flags.judge(star, evidence.of(star), frame);
