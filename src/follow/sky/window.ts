@@ -30,16 +30,11 @@ export interface StarTonight {
 }
 
 interface Moment {
-  readonly now_ms: number;
+  readonly time_ms: number;
   readonly zenith: Direction;
-  readonly toApparent: (direction: Direction) => Direction;
-  /** Moon and Sun, worked out when first needed. */
-  lights?: {
-    readonly moon: Direction;
-    readonly moonZenithDistance_deg: number;
-    readonly phaseAngle_deg: number;
-    readonly sunAltitude_deg: number;
-  };
+  readonly moon: Direction;
+  readonly moonAltitude_deg: number;
+  readonly sunAltitude_deg: number;
 }
 
 /**
@@ -50,9 +45,14 @@ export class NightSky {
   private readonly times: Float64Array;
   private readonly zenith: readonly Direction[];
   private readonly moon: readonly Direction[];
-  private readonly moonUp: readonly boolean[];
+  private readonly moonAltitude_deg: readonly number[];
+  private readonly sunAltitude_deg: readonly number[];
+  private readonly phaseAngle_deg: number;
   private readonly limit_deg: number;
-  private moment: Moment | undefined;
+  /** The Earth's motion turns by a degree a day: one aberration serves the night. */
+  private readonly toApparent: (direction: Direction) => Direction;
+  private kept: Moment | undefined;
+  private zenithKept: { readonly time_ms: number; readonly row: Direction } | undefined;
 
   constructor(
     private readonly ephemeris: Ephemeris,
@@ -67,18 +67,20 @@ export class NightSky {
     );
     this.zenith = Array.from(this.times, time => ephemeris.zenithRow(time));
     this.moon = Array.from(this.times, time => ephemeris.moonDirection(time));
-    this.moonUp = Array.from(this.times, time => ephemeris.moonAltitude_deg(time) > 0);
+    this.moonAltitude_deg = Array.from(this.times, time => ephemeris.moonAltitude_deg(time));
+    this.sunAltitude_deg = Array.from(this.times, time => ephemeris.sunAltitude_deg(time));
+    this.phaseAngle_deg = ephemeris.moonPhaseAngle_deg((night.noon_ms + night.nextNoon_ms) / 2);
+    this.toApparent = ephemeris.aberrationAt((night.noon_ms + night.nextNoon_ms) / 2);
     this.limit_deg = Math.max(site.minAltitude_deg, altitudeOfAirmass_deg(site.maxAirmass));
   }
 
   /** How a star stands tonight, whatever is done with it. */
   follow(ra_deg: number, dec_deg: number, now_ms: number): StarTonight {
-    const moment = this.momentOf(now_ms);
-    const direction = moment.toApparent(directionOf(ra_deg, dec_deg));
-    const altitudeNow_deg = altitudeIn(moment.zenith, direction);
+    const direction = this.toApparent(directionOf(ra_deg, dec_deg));
+    const altitudeNow_deg = altitudeIn(this.zenithAt(now_ms), direction);
     const altitudes = this.zenith.map(row => altitudeIn(row, direction) - this.limit_deg);
     const clear = this.moon.map((moon, i) =>
-      this.moonUp[i] ? separation_deg(moon, direction) - this.site.moonDistance_deg : 1,
+      this.moonAltitude_deg[i] > 0 ? separation_deg(moon, direction) - this.site.moonDistance_deg : 1,
     );
     return {
       now_ms,
@@ -107,34 +109,53 @@ export class NightSky {
     };
   }
 
-  /** Where a target, the Moon and the Sun stand at a time. */
+  /**
+   * Where a target, the Moon and the Sun stand: in the dark at the nearest point of the grid, which is near enough for
+   * the brightness of the sky; outside it at the time itself.
+   */
   geometryAt(ra_deg: number, dec_deg: number, time_ms: number): SkyGeometry {
     const moment = this.momentOf(time_ms);
-    moment.lights ??= {
-      moon: this.ephemeris.moonDirection(time_ms),
-      moonZenithDistance_deg: 90 - this.ephemeris.moonAltitude_deg(time_ms),
-      phaseAngle_deg: this.ephemeris.moonPhaseAngle_deg(time_ms),
-      sunAltitude_deg: this.ephemeris.sunAltitude_deg(time_ms),
-    };
-    const direction = moment.toApparent(directionOf(ra_deg, dec_deg));
-    const { moon, ...lights } = moment.lights;
+    const direction = this.toApparent(directionOf(ra_deg, dec_deg));
     return {
-      ...lights,
-      separation_deg: separation_deg(moon, direction),
+      phaseAngle_deg: this.phaseAngle_deg,
+      sunAltitude_deg: moment.sunAltitude_deg,
+      moonZenithDistance_deg: 90 - moment.moonAltitude_deg,
+      separation_deg: separation_deg(moment.moon, direction),
       targetZenithDistance_deg: 90 - altitudeIn(moment.zenith, direction),
     };
   }
 
-  /** What is the same for all stars at one time, kept until the time changes. */
-  private momentOf(now_ms: number): Moment {
-    if (this.moment?.now_ms !== now_ms) {
-      this.moment = {
-        now_ms,
-        zenith: this.ephemeris.zenithRow(now_ms),
-        toApparent: this.ephemeris.aberrationAt(now_ms),
+  /** What is the same for all stars at one time: from the grid where it reaches, else worked out and kept. */
+  private momentOf(time_ms: number): Moment {
+    const { times } = this;
+    if (time_ms >= times[0] && time_ms <= times[times.length - 1]) {
+      const i = Math.round((time_ms - times[0]) / (times[1] - times[0]));
+      return {
+        time_ms,
+        zenith: this.zenith[i],
+        moon: this.moon[i],
+        moonAltitude_deg: this.moonAltitude_deg[i],
+        sunAltitude_deg: this.sunAltitude_deg[i],
       };
     }
-    return this.moment;
+    if (this.kept?.time_ms !== time_ms) {
+      this.kept = {
+        time_ms,
+        zenith: this.ephemeris.zenithRow(time_ms),
+        moon: this.ephemeris.moonDirection(time_ms),
+        moonAltitude_deg: this.ephemeris.moonAltitude_deg(time_ms),
+        sunAltitude_deg: this.ephemeris.sunAltitude_deg(time_ms),
+      };
+    }
+    return this.kept;
+  }
+
+  /** Rotation to the zenith at one time, kept for the stars that are looked at together. */
+  private zenithAt(time_ms: number): Direction {
+    if (this.zenithKept?.time_ms !== time_ms) {
+      this.zenithKept = { time_ms, row: this.ephemeris.zenithRow(time_ms) };
+    }
+    return this.zenithKept.row;
   }
 
   /** Stretches of the night in which both values are positive. */
