@@ -1,4 +1,3 @@
-import { FLAG_CODES } from '../follow/flags/index.js';
 import { darkWords } from '../follow/sky/night-of.js';
 import { CLASS_COUNT } from '../science/classes.js';
 import { letterPositions, spectralTypeText, tracksInAxes } from '../science/odds/index.js';
@@ -109,9 +108,4 @@ export class ViewMaker {
       darkWords: darkWords(night),
     };
   }
-}
-
-/** Names of the flags whose bits are set. */
-export function flagNames(bits: number): readonly string[] {
-  return FLAG_CODES.filter((_, i) => (bits & (1 << i)) !== 0);
 }

@@ -1,5 +1,4 @@
-import { CLASSES, type StarClass } from '../../science/classes.js';
-import type { StarEvidence } from './evidence.js';
+import type { StarClass } from '../../science/classes.js';
 import type { FlagRule } from './rule.js';
 import { classSentence } from './words.js';
 
@@ -19,10 +18,3 @@ export const hotSubdwarf = classFlag('hot-subdwarf', 'hot subdwarf', ['sdOB']);
 export const supergiant = classFlag('supergiant', 'supergiant', ['Ib', 'Iab', 'Ia']);
 export const brightGiant = classFlag('bright-giant', 'bright giant', ['II']);
 export const subdwarf = classFlag('subdwarf', 'metal-poor subdwarf', ['sd']);
-
-/** Most probable class of the evidence. */
-export function mostProbable(evidence: StarEvidence): StarClass {
-  return CLASSES.reduce((best, starClass) =>
-    evidence.odds[starClass] > evidence.odds[best] ? starClass : best,
-  );
-}

@@ -46,15 +46,3 @@ const STEPS: Readonly<Record<Direction, readonly [number, number]>> = {
   up: [0, -1],
   down: [0, 1],
 };
-
-/** The star nearest to a point of the diagram; -1 when no star is placed. */
-export function starNearest(stars: StarColumns, window: DiagramWindow, colour: number, mag: number): number {
-  const width = window.colourTo - window.colourFrom;
-  const height = window.magTo - window.magFrom;
-  let [best, bestCost] = [-1, Infinity];
-  for (let star = 0; star < stars.count; star++) {
-    const cost = ((stars.colour[star] - colour) / width) ** 2 + ((stars.absMag[star] - mag) / height) ** 2;
-    if (cost < bestCost) [best, bestCost] = [star, cost];
-  }
-  return best;
-}

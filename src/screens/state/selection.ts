@@ -1,4 +1,4 @@
-import type { NightView, ShortlistEntry } from '../../night/view.js';
+import type { NightView } from '../../night/view.js';
 import { nextTarget } from '../pictures/star-words.js';
 import { fieldLayout, shortlistEntries, tableHeight } from '../views/layout.js';
 import { holding, wholeWindow } from './diagram-window.js';
@@ -11,10 +11,6 @@ import { follow } from './scroll.js';
 export function currentStar(state: ScreenState): number {
   if (state.selected !== NO_STAR) return state.selected;
   return nextTarget(state.view?.shortlist ?? [], state.now_ms)?.star ?? NO_STAR;
-}
-
-export function shortlistEntryOf(view: NightView | undefined, star: number): ShortlistEntry | undefined {
-  return view?.shortlist.find(entry => entry.star === star);
 }
 
 /** Stars of the shortlist in its order. */
