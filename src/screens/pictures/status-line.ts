@@ -34,6 +34,8 @@ function countsOf({ view, unseen, folderPresent }: Shown): Part[] {
   if (view === undefined) return gone;
   const problems = view.problems.length;
   return [
+    // First of all: everything after it may be cut off, and all of it is getting old.
+    ...gone,
     plain(`  ${count(view.frames.length, 'frame')}  ${count(view.stars.count, 'star')}  `),
     { text: `${view.shortlist.length} flagged`, style: { colour: 'flagged' } },
     ...(unseen.size === 0
@@ -42,7 +44,6 @@ function countsOf({ view, unseen, folderPresent }: Shown): Part[] {
     ...(problems === 0
       ? []
       : [{ text: `  ${count(problems, 'problem')}`, style: { colour: 'warning' } } as const]),
-    ...gone,
   ];
 }
 
