@@ -37,6 +37,8 @@ function classifyElsewhere(model: ClassModel, inputs: StarInputs, from: number):
       sigma_mag: inputs.sigma_mag.map(part),
       parallax_mas: part(inputs.parallax_mas),
       parallaxSigma_mas: part(inputs.parallaxSigma_mas),
+      pmRa_masPerYear: part(inputs.pmRa_masPerYear),
+      pmDec_masPerYear: part(inputs.pmDec_masPerYear),
       reddening_EBV: part(inputs.reddening_EBV),
     },
   };

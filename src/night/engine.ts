@@ -167,6 +167,8 @@ export class NightEngine implements NightState {
       sigma_mag: bands.map(band => catalogue.sigma(band)),
       parallax_mas: catalogue.parallax_mas,
       parallaxSigma_mas: catalogue.parallax_sigma_mas,
+      pmRa_masPerYear: catalogue.pmRa_masPerYear,
+      pmDec_masPerYear: catalogue.pmDec_masPerYear,
       reddening_EBV: catalogue.reddening_EBV,
     };
   }

@@ -17,6 +17,10 @@ const FIELD: FieldPrior = {
   modulus_mag: Number.NaN,
   modulusSigma_mag: Number.NaN,
   memberShare: 0,
+  pmRa_masPerYear: Number.NaN,
+  pmDec_masPerYear: Number.NaN,
+  pmSigma_masPerYear: Number.NaN,
+  fieldPmSigma_masPerYear: 8,
   age_Gyr: Number.NaN,
   extinction_AV: 0.1,
   extinctionSigma_AV: 0.05,
@@ -53,6 +57,8 @@ function field(parallaxSnr: number): StarInputs {
     sigma_mag: [column(() => 0.015), column(() => 0.01)],
     parallax_mas: column(i => (parallaxSnr > 0 ? 1000 / distance_pc(i) : Number.NaN)),
     parallaxSigma_mas: column(i => (parallaxSnr > 0 ? 1000 / distance_pc(i) / parallaxSnr : Number.NaN)),
+    pmRa_masPerYear: column(() => Number.NaN),
+    pmDec_masPerYear: column(() => Number.NaN),
     reddening_EBV: column(() => Number.NaN),
   };
 }

@@ -5,6 +5,8 @@ export interface PtyOptions {
   readonly columns?: number;
   readonly rows?: number;
   readonly env?: Readonly<Record<string, string | undefined>>;
+  /** How long the terminal's own answers are on their way, as over a slow line. */
+  readonly answer_ms?: number;
 }
 
 /** A real program in a real pseudo-terminal, its screen read through a terminal emulator. */
@@ -21,14 +23,16 @@ export class PtySession {
   constructor(
     command: string,
     args: readonly string[],
-    { columns = 80, rows = 24, env = {} }: PtyOptions = {},
+    { columns = 80, rows = 24, env = {}, answer_ms = 0 }: PtyOptions = {},
   ) {
     const inherited = { ...process.env, CI: undefined, NO_COLOR: undefined, FORCE_COLOR: undefined };
     const wanted = { ...inherited, TERM: 'xterm-256color', LANG: 'C.UTF-8', LC_ALL: undefined, ...env };
     const given = Object.entries(wanted).filter((entry): entry is [string, string] => entry[1] !== undefined);
     this.terminal = new xterm.Terminal({ cols: columns, rows, allowProposedApi: true, scrollback: 200 });
     this.process = pty.spawn(command, [...args], { cols: columns, rows, env: Object.fromEntries(given) });
-    this.terminal.onData(data => !this.ended && this.process.write(data));
+    this.terminal.onData(data => {
+      setTimeout(() => !this.ended && this.process.write(data), answer_ms);
+    });
     this.process.onData(data => {
       this.bytes += Buffer.byteLength(data);
       this.raw += data;
@@ -61,6 +65,11 @@ export class PtySession {
     if (!this.ended) this.process.kill(signal);
   }
 
+  /** The line drops: the terminal itself goes away. */
+  hangUp(): void {
+    (this.process as unknown as { readonly destroy: () => void }).destroy();
+  }
+
   screen(): string {
     const buffer = this.terminal.buffer.active;
     const lines = Array.from(
@@ -80,8 +89,13 @@ export class PtySession {
   }
 
   /** Waits until the screen shows something. */
-  async shows(what: string | RegExp, patience_ms = 15_000): Promise<void> {
+  shows(what: string | RegExp, patience_ms = 15_000): Promise<void> {
     const shown = () => (typeof what === 'string' ? this.screen().includes(what) : what.test(this.screen()));
+    return this.until(shown, String(what), patience_ms);
+  }
+
+  /** Waits until something is true; looks whenever the program has written. */
+  async until(shown: () => boolean, what: string, patience_ms = 15_000): Promise<void> {
     if (shown()) return;
     await new Promise<void>((resolve, reject) => {
       const timer = setTimeout(() => {

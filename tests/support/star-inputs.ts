@@ -17,6 +17,10 @@ export const OPEN_FIELD: FieldPrior = {
   modulus_mag: Number.NaN,
   modulusSigma_mag: Number.NaN,
   memberShare: 0,
+  pmRa_masPerYear: Number.NaN,
+  pmDec_masPerYear: Number.NaN,
+  pmSigma_masPerYear: Number.NaN,
+  fieldPmSigma_masPerYear: 8,
   age_Gyr: Number.NaN,
   extinction_AV: 0,
   extinctionSigma_AV: 0.02,
@@ -34,6 +38,8 @@ export interface TestStar {
   readonly sigma_mag?: number;
   readonly parallax_mas?: number;
   readonly parallaxSigma_mas?: number;
+  readonly pmRa_masPerYear?: number;
+  readonly pmDec_masPerYear?: number;
   readonly reddening_EBV?: number;
 }
 
@@ -45,6 +51,8 @@ export function starInputs(stars: readonly TestStar[], bands: readonly Band[]): 
     sigma_mag: bands.map(() => Float64Array.from(stars, star => star.sigma_mag ?? 0.015)),
     parallax_mas: Float64Array.from(stars, star => star.parallax_mas ?? Number.NaN),
     parallaxSigma_mas: Float64Array.from(stars, star => star.parallaxSigma_mas ?? Number.NaN),
+    pmRa_masPerYear: Float64Array.from(stars, star => star.pmRa_masPerYear ?? Number.NaN),
+    pmDec_masPerYear: Float64Array.from(stars, star => star.pmDec_masPerYear ?? Number.NaN),
     reddening_EBV: Float64Array.from(stars, star => star.reddening_EBV ?? Number.NaN),
   };
 }

@@ -84,6 +84,8 @@ export function drawField(plan: FieldPlan, prior: FieldPrior): SyntheticField {
       sigma_mag: columns.map(({ sigma }) => sigma),
       parallax_mas,
       parallaxSigma_mas: new Float64Array(plan.stars).fill(plan.parallaxSigma_mas),
+      pmRa_masPerYear: new Float64Array(plan.stars).fill(Number.NaN),
+      pmDec_masPerYear: new Float64Array(plan.stars).fill(Number.NaN),
       reddening_EBV: new Float64Array(plan.stars).fill(Number.NaN),
     },
   };

@@ -11,6 +11,12 @@ export interface FieldPrior {
   readonly modulusSigma_mag: number;
   /** Share of the stars at a given magnitude that belong to the cluster, 0 to 1. */
   readonly memberShare: number;
+  /** Mean proper motion of the cluster (RA times cos dec), and the spread of its members with their errors; NaN unknown. */
+  readonly pmRa_masPerYear: number;
+  readonly pmDec_masPerYear: number;
+  readonly pmSigma_masPerYear: number;
+  /** Spread of the field stars' proper motions about nil. */
+  readonly fieldPmSigma_masPerYear: number;
   /** NaN where unknown. */
   readonly age_Gyr: number;
   readonly extinction_AV: number;

@@ -5,6 +5,8 @@ import type { ClassModel, NoiseGroup } from './model.js';
 import type { StarData } from './star-data.js';
 
 const MIN_COUNTS = 1e-30;
+/** No field star is too fast: high-velocity stars have a floor under their Gaussian. */
+const LEAST_MOTION = 1e-6;
 const TWO_PI = 2 * Math.PI;
 
 /**
@@ -122,12 +124,27 @@ export class JointDistance {
     const mag = star.mags[star.referenceSlot];
     this.fieldScale = (1 - field.memberShare) / Math.max(MIN_COUNTS, this.model.fieldCounts(mag));
     this.clusterScale = field.memberShare / Math.max(MIN_COUNTS, this.model.clusterCounts(mag));
+    this.weighMotion(star);
     if (!star.hasParallax) return;
     const expected_mas = 1000 / 10 ** ((field.modulus_mag + 5) / 5);
     const variance =
       star.parallaxSigma_mas ** 2 + (expected_mas * (Math.LN10 / 5) * field.modulusSigma_mag) ** 2;
     const misfit = star.parallax_mas - expected_mas;
     this.clusterScale *= Math.exp((-0.5 * misfit * misfit) / variance) / Math.sqrt(TWO_PI * variance);
+  }
+
+  /** A star that moves with the cluster is likelier a member, one that does not, hardly: two round Gaussians. */
+  private weighMotion(star: StarData): void {
+    const { field } = this.model;
+    const inCluster = field.pmSigma_masPerYear ** 2;
+    const inField = field.fieldPmSigma_masPerYear ** 2;
+    const { pmRa_masPerYear, pmDec_masPerYear } = star;
+    const fromCluster =
+      (pmRa_masPerYear - field.pmRa_masPerYear) ** 2 + (pmDec_masPerYear - field.pmDec_masPerYear) ** 2;
+    if (Number.isNaN(fromCluster + inCluster)) return;
+    const fromRest = pmRa_masPerYear ** 2 + pmDec_masPerYear ** 2;
+    this.clusterScale *= Math.exp((-0.5 * fromCluster) / inCluster) / inCluster;
+    this.fieldScale *= Math.max(LEAST_MOTION, Math.exp((-0.5 * fromRest) / inField)) / inField;
   }
 
   private prepareRanges(limit_chi2: number): void {

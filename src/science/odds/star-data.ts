@@ -27,6 +27,8 @@ export class StarData {
   priorAVVariance = 0;
   parallax_mas = Number.NaN;
   parallaxSigma_mas = Number.NaN;
+  pmRa_masPerYear = Number.NaN;
+  pmDec_masPerYear = Number.NaN;
 
   constructor(
     private readonly model: ClassModel,
@@ -45,6 +47,8 @@ export class StarData {
     this.takeExtinction(i);
     this.parallax_mas = this.inputs.parallax_mas[i] - this.model.field.parallaxZeroPoint_mas;
     this.parallaxSigma_mas = this.inputs.parallaxSigma_mas[i];
+    this.pmRa_masPerYear = this.inputs.pmRa_masPerYear[i];
+    this.pmDec_masPerYear = this.inputs.pmDec_masPerYear[i];
   }
 
   get hasParallax(): boolean {

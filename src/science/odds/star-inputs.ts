@@ -9,6 +9,8 @@ export interface StarInputs {
   readonly sigma_mag: readonly Float64Array[];
   readonly parallax_mas: Float64Array;
   readonly parallaxSigma_mas: Float64Array;
+  readonly pmRa_masPerYear: Float64Array;
+  readonly pmDec_masPerYear: Float64Array;
   /** E(B-V) of the star itself, where the table carries one. */
   readonly reddening_EBV: Float64Array;
 }

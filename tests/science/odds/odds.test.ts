@@ -137,6 +137,37 @@ describe('distance', () => {
   });
 });
 
+describe('membership', () => {
+  const cluster = {
+    ...OPEN_FIELD,
+    population: 'disc-cluster' as const,
+    modulus_mag: 9.4,
+    modulusSigma_mag: 0.05,
+    memberShare: 0.4,
+    pmRa_masPerYear: 7.4,
+    pmDec_masPerYear: -9.1,
+    pmSigma_masPerYear: 0.4,
+    age_Gyr: 0.5,
+  };
+  const moving = (pmRa_masPerYear: number, pmDec_masPerYear: number) => ({
+    mags: { V: 9.4 + 4.8, B: 9.4 + 5.45 },
+    parallax_mas: 1.32,
+    parallaxSigma_mas: 0.03,
+    pmRa_masPerYear,
+    pmDec_masPerYear,
+  });
+  it('proper motion raises it and lowers it; without one it stays between', () => {
+    const stars = [moving(7.5, -9.0), moving(Number.NaN, Number.NaN), moving(-3, 4)];
+    const [along, unknown, against] = classifyAll(stars, ['B', 'V'], BV_AXES, cluster).map(
+      (_, i, all) => all[0].columns.memberOdds[i],
+    );
+    expect(along).toBeGreaterThan(0.98);
+    expect(against).toBeLessThan(0.001);
+    expect(unknown).toBeGreaterThan(0.5);
+    expect(unknown).toBeLessThan(along);
+  });
+});
+
 describe('reddening', () => {
   it('moves colour and magnitude together: a reddened Sun with its E(B-V) known is a G2 dwarf again', () => {
     const av = 1.24;
