@@ -7,6 +7,7 @@ import { isRefusal, readWhole } from '../night/watcher/safe-file.js';
 import { EXIT, UsageError } from './exit-codes.js';
 import type { CommandIo } from './io.js';
 import { profileFor } from './load-profile.js';
+import { explain } from './output/explanation.js';
 import { FORMATS } from './output/formats.js';
 import { RecordMaker } from './output/star-record.js';
 
@@ -14,6 +15,7 @@ interface ClassifyOptions {
   readonly profile?: string;
   readonly format: keyof typeof FORMATS;
   readonly flagged?: boolean;
+  readonly explain?: string;
   readonly at?: number;
 }
 
@@ -38,8 +40,15 @@ export async function classifyCommand(
   }
   for (const { problems: found } of await engine.absorbAll(read)) problems.push(...found);
   for (const problem of problems) io.err(`${formatProblem(problem)}\n`);
-  await printStars(engine, options, io);
+  if (options.explain === undefined) await printStars(engine, options, io);
+  else await io.out(`${explain(engine, starNamed(engine, options.explain)).join('\n')}\n`);
   return problems.some(problem => problem.cost === 'file') ? EXIT.someUnreadable : EXIT.ok;
+}
+
+function starNamed(engine: NightEngine, id: string): number {
+  const star = engine.catalogue.ids.indexOf(id);
+  if (star < 0) throw new UsageError(`no star called '${id}' in these files`);
+  return star;
 }
 
 async function printStars(engine: NightEngine, options: ClassifyOptions, io: CommandIo): Promise<void> {

@@ -82,6 +82,7 @@ function commandTable(io: CommandIo, finish: (code: number) => void): Command {
       new Option('-f, --format <format>', 'how to print').choices(['table', 'jsonl', 'csv']).default('table'),
     )
     .option('--flagged', 'only the flagged stars')
+    .option('--explain <id>', 'the evidence behind the class of one star')
     .option('--at <time>', 'UTC time for windows and airmass, e.g. 2026-11-08T22:00Z (default: now)', utcTime)
     .action(async (files: string[], options) => {
       const { classifyCommand } = await import('./classify.js');

@@ -153,6 +153,19 @@ describe('classify', () => {
     },
   );
 
+  it('--explain shows what each class makes of a star', async () => {
+    const path = file('t.csv', TABLE);
+    const { code, out } = await classify(path, '--explain', 'dwarf');
+    expect(code).toBe(0);
+    expect(out).toMatch(
+      /^dwarf: D\d WD 0\.9\d\nmeasured +B 15\.050 ± 0\.010 +V 15\.000 ± 0\.010 +parallax 20\.000 ± 0\.100 mas$/m,
+    );
+    expect(out).toMatch(/^WD +0\.99 +D\d +1\d{4} +50\.0 +0\.\d\d +[+-]\d\.\d [+-]\d\.\d$/m);
+    expect(out).toMatch(/^flag white-dwarf: M_V/m);
+    const missing = await classify(path, '--explain', 'nobody');
+    expect([missing.code, missing.err]).toEqual([2, "nightsieve: no star called 'nobody' in these files\n"]);
+  });
+
   it('a bad row costs itself', async () => {
     const { code, out, err } = await classify(file('row.csv', `${TABLE}half,a\n`), '--format', 'jsonl');
     expect(code).toBe(0);

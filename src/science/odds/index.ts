@@ -3,6 +3,6 @@ export { absMagOnLine, letterPositions, type TrackLine, tracksInAxes } from './d
 export type { FieldPrior, Population } from './field.js';
 export { buildModel, type ClassModel, type DiagramAxes } from './model.js';
 export { growOddsColumns, makeOddsColumns, type OddsColumns } from './odds-columns.js';
-export { PosteriorReader, type PredictedMagnitudes } from './posterior.js';
+export { type ClassEvidence, PosteriorReader, type PredictedMagnitudes } from './posterior.js';
 export { bestClassIndex, oddsText, spectralTypeText, temperatureTypeText } from './spectral-type.js';
 export type { StarInputs } from './star-inputs.js';

@@ -1,4 +1,5 @@
-import { BAND_COUNT, BANDS } from '../bands.js';
+import { BAND_COUNT, BAND_INDEX, BANDS, type Band } from '../bands.js';
+import { CLASSES, type StarClass } from '../classes.js';
 import type { ClassModel } from './model.js';
 import { StarFit } from './star-fit.js';
 import type { StarInputs } from './star-inputs.js';
@@ -8,6 +9,18 @@ export interface PredictedMagnitudes {
   /** Laid out as BANDS; NaN where no likely node knows the band. */
   readonly mag: Float64Array;
   readonly sigma_mag: Float64Array;
+}
+
+/** The best node of one class for one star: what it would have the star be, and how far off that is. */
+export interface ClassEvidence {
+  readonly starClass: StarClass;
+  readonly odds: number;
+  readonly subtype: number;
+  readonly teff_K: number;
+  readonly modulus_mag: number;
+  readonly extinction_AV: number;
+  /** Observed minus predicted in each band, in units of its error and the class's colour scatter together. */
+  readonly misfits: readonly { readonly band: Band; readonly sigma: number }[];
 }
 
 /** Looks at single stars in detail, in buffers that are used again: meant for the stars on the screen. */
@@ -25,6 +38,43 @@ export class PosteriorReader {
   predicted(i: number): PredictedMagnitudes {
     this.fit.fit(i);
     return predictMagnitudes(this.model, this.inputs, this.fit, i);
+  }
+
+  /** The evidence behind the odds of star i, best class first; classes without a node that could be are left out. */
+  evidence(i: number): readonly ClassEvidence[] {
+    this.fit.fit(i);
+    const best = new Map<number, number>();
+    for (let slot = 0; slot < this.fit.survivors; slot++) {
+      const c = this.model.classIndex[this.fit.node[slot]];
+      const known = best.get(c);
+      if (known === undefined || this.fit.weight[slot] > this.fit.weight[known]) best.set(c, slot);
+    }
+    return [...best].map(([c, slot]) => this.evidenceOf(i, c, slot)).sort((a, b) => b.odds - a.odds);
+  }
+
+  private evidenceOf(i: number, c: number, slot: number): ClassEvidence {
+    const { fit, model, inputs } = this;
+    const node = fit.node[slot];
+    const { subtype, teff_K, bandScatter_mag } = model.nodes[node];
+    const misfits = inputs.bands.flatMap((band, b) => {
+      const index = BAND_INDEX[band];
+      const predicted =
+        model.absMag[index][node] +
+        fit.offset_mag[slot] +
+        fit.extinction_AV[slot] * model.extinctionRatio[index][node];
+      const error = Math.hypot(inputs.sigma_mag[b][i], model.field.floor_mag, bandScatter_mag);
+      const sigma = (inputs.mag[b][i] - predicted) / error;
+      return Number.isNaN(sigma) ? [] : [{ band, sigma }];
+    });
+    return {
+      starClass: CLASSES[c],
+      odds: fit.classOdds[c],
+      subtype,
+      teff_K,
+      modulus_mag: fit.modulus_mag[slot],
+      extinction_AV: fit.extinction_AV[slot],
+      misfits,
+    };
   }
 }
 

@@ -1,0 +1,54 @@
+import type { NightState } from '../../night/night-state.js';
+import { CLASS_COUNT } from '../../science/classes.js';
+import {
+  type ClassEvidence,
+  oddsText,
+  PosteriorReader,
+  spectralTypeText,
+  temperatureTypeText,
+} from '../../science/odds/index.js';
+
+/** The evidence behind one star's class, in lines: what was measured, and what each class makes of it. */
+export function explain(night: NightState, star: number): string[] {
+  const { catalogue, odds, inputs, flags } = night;
+  const type = spectralTypeText(odds.odds, star * CLASS_COUNT, odds.subtype[star], odds.teff_K[star]);
+  const evidence = new PosteriorReader(night.model, inputs).evidence(star);
+  const entry = flags.of(star);
+  return [
+    `${catalogue.ids[star]}: ${type}`,
+    `measured   ${measured(night, star)}`,
+    '',
+    `class  odds   best as    Teff K  distance pc   A_V   misfit in sigma: ${inputs.bands.join(' ')}`,
+    ...evidence.map(evidenceLine),
+    `none   ${oddsText(odds.odds[star * CLASS_COUNT + CLASS_COUNT - 1])}   any colour`,
+    ...(entry?.flags ?? []).map(flag => `flag ${flag.code}: ${flag.because}`),
+    ...(entry?.cautions ?? []).map(caution => `caution: ${caution}`),
+  ];
+}
+
+function measured({ inputs }: NightState, star: number): string {
+  const mags = inputs.bands.flatMap((band, b) =>
+    Number.isNaN(inputs.mag[b][star])
+      ? []
+      : [`${band} ${inputs.mag[b][star].toFixed(3)} ± ${inputs.sigma_mag[b][star].toFixed(3)}`],
+  );
+  const parallax = inputs.parallax_mas[star];
+  const distance = Number.isNaN(parallax)
+    ? 'no parallax'
+    : `parallax ${parallax.toFixed(3)} ± ${inputs.parallaxSigma_mas[star].toFixed(3)} mas`;
+  return [...mags, distance].join('   ');
+}
+
+function evidenceLine(evidence: ClassEvidence): string {
+  const { starClass, odds, subtype, teff_K, modulus_mag, extinction_AV, misfits } = evidence;
+  const cells = [
+    starClass.padEnd(6),
+    oddsText(odds).padEnd(6),
+    temperatureTypeText(starClass, subtype, teff_K).padEnd(8),
+    teff_K.toFixed(0).padStart(8),
+    (10 ** ((modulus_mag + 5) / 5)).toFixed(1).padStart(12),
+    extinction_AV.toFixed(2).padStart(6),
+    `  ${misfits.map(({ sigma }) => (sigma < 0 ? '' : '+') + sigma.toFixed(1)).join(' ')}`,
+  ];
+  return cells.join(' ');
+}
