@@ -8,8 +8,9 @@ export interface LookWishes {
   readonly glyphs?: GlyphName;
 }
 
-/** Terminals that show no colour, or no character beyond their own set. */
+/** Terminals that show no colour, and those that show no character beyond their own set. */
 const DUMB = /^(dumb|unknown)$/;
+const MONOCHROME = /^vt\d/;
 const OLD = /^(linux|vt\d+.*|ansi|cons.*)$/;
 
 /** How to draw on this terminal, from its environment and the observer's wishes. */
@@ -35,7 +36,7 @@ export function colourDepth(environment: Environment): ColourDepth {
     };
     return forced[FORCE_COLOR] ?? '16';
   }
-  if (TERM === '' || DUMB.test(TERM)) return 'none';
+  if (TERM === '' || DUMB.test(TERM) || MONOCHROME.test(TERM)) return 'none';
   if (/^(truecolor|24bit)$/.test(COLORTERM) || TERM.endsWith('-direct')) return 'true';
   return TERM.includes('256') ? '256' : '16';
 }

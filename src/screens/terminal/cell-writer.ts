@@ -96,6 +96,10 @@ export class CellWriter {
     const base = y * this.columns;
     let x = start;
     let style = 0;
+    // Half a wide character would shift the row: what is laid over one half takes the other with it.
+    if (x > 0 && x < this.columns && this.wanted.code[base + x] === WIDE_REST) {
+      this.wanted.set(base + x - 1, BLANK, 0);
+    }
     for (let i = 0; i < line.length; ) {
       const codePoint = line.codePointAt(i) as number;
       if (codePoint === ESCAPE) {
@@ -106,7 +110,7 @@ export class CellWriter {
         continue;
       }
       i += codePoint > 0xffff ? 2 : 1;
-      const width = codePoint < BLANK ? 0 : charWidth(codePoint);
+      const width = charWidth(codePoint);
       if (width === 0 || x + width > this.columns) continue;
       this.wanted.set(base + x++, codePoint, style);
       if (width === 2) {
@@ -114,7 +118,10 @@ export class CellWriter {
         this.wanted.set(base + x++, WIDE_REST, style);
       }
     }
-    for (; fill && x < this.columns; x++) this.wanted.set(base + x, BLANK, 0);
+    if (fill) this.wanted.blank(base + x, base + this.columns);
+    else if (x < this.columns && this.wanted.code[base + x] === WIDE_REST) {
+      this.wanted.set(base + x, BLANK, 0);
+    }
   }
 
   private findDirty(y: number): boolean {
@@ -161,16 +168,22 @@ export class CellWriter {
         shown.blank(base + x, base + columns);
         return;
       }
-      for (; x <= last && dirty[x] === 1; x++) {
+      let isWide = false;
+      while (x <= last && dirty[x] === 1 && !isWide) {
         const code = wanted.code[base + x];
-        if (code !== WIDE_REST) {
-          this.setStyle(wanted.style[base + x]);
-          this.out += String.fromCodePoint(code);
-        }
+        this.setStyle(wanted.style[base + x]);
+        this.out += String.fromCodePoint(code);
         shown.set(base + x, code, wanted.style[base + x]);
+        x++;
+        isWide = x < columns && wanted.code[base + x] === WIDE_REST;
+        if (isWide) {
+          shown.set(base + x, WIDE_REST, wanted.style[base + x]);
+          x++;
+        }
       }
-      this.x = x >= columns ? -1 : x;
-      this.y = x >= columns ? -1 : y;
+      // After the last column the cursor is in between; after a wide character terminals do not agree where it is.
+      this.x = isWide || x >= columns ? -1 : x;
+      this.y = this.x < 0 ? -1 : y;
     }
   }
 

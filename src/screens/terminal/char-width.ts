@@ -6,10 +6,9 @@
 export function charWidth(codePoint: number): 0 | 1 | 2 {
   if (codePoint < 0x300) return isControl(codePoint) ? 0 : 1;
   if (isDrawing(codePoint)) return 1;
-  if (isWideEastAsian(codePoint)) return 2;
   const character = String.fromCodePoint(codePoint);
   if (INVISIBLE.test(character)) return 0;
-  return PICTOGRAPH.test(character) ? 2 : 1;
+  return isWideEastAsian(codePoint) || PICTOGRAPH.test(character) ? 2 : 1;
 }
 
 /** Cells of a text without escape sequences. */

@@ -57,12 +57,15 @@ export class Grid {
       let line = '';
       let current = '';
       for (let x = 0; x < this.width; x++) {
-        const sgr = sgrOf(this.styles[y * this.width + x], look);
+        const character = this.shownAt(x, y);
+        const style = this.styleAt(x, y);
+        // A blank nobody styled stays the terminal's own, so that the writer can erase to the end of the line.
+        const sgr = character === ' ' && style === undefined ? '' : sgrOf(style, look);
         if (sgr !== current) {
           line += sgr === '' ? '\x1b[0m' : `\x1b[0;${sgr}m`;
           current = sgr;
         }
-        line += this.characters[y * this.width + x];
+        line += character;
       }
       return current === '' ? line : `${line}\x1b[0m`;
     });
@@ -71,11 +74,23 @@ export class Grid {
   /** The characters alone, trailing blanks cut: what a test compares. */
   toPlainText(): string {
     const rows = Array.from({ length: this.height }, (_, y) =>
-      this.characters
-        .slice(y * this.width, (y + 1) * this.width)
+      Array.from({ length: this.width }, (_, x) => this.shownAt(x, y))
         .join('')
         .trimEnd(),
     );
     return rows.join('\n');
   }
+
+  /** What is drawn at a cell: a wide character that lost one of its halves is a blank, so that rows keep their width. */
+  private shownAt(x: number, y: number): string {
+    const character = this.at(x, y);
+    if (character === '') return x > 0 && isWide(this.at(x - 1, y)) ? '' : ' ';
+    if (!isWide(character)) return character;
+    return x + 1 < this.width && this.at(x + 1, y) === '' ? character : ' ';
+  }
+}
+
+function isWide(character: string): boolean {
+  // No wide character comes before the Hangul letters.
+  return character >= '\u1100' && charWidth(character.codePointAt(0) as number) === 2;
 }

@@ -24,6 +24,8 @@ export const REMOTE_ESCAPE_MS = 100;
 /** A sequence that has begun, or a paste, is waited for much longer. */
 const SEQUENCE_MS = 1000;
 const LONGEST_PASTE = 100_000;
+/** Longer than any report: something without an end must not swallow the keys behind it for ever. */
+const LONGEST_SEQUENCE = 4096;
 
 const FINAL_KEYS: Readonly<Record<string, KeyName>> = {
   A: 'up',
@@ -120,8 +122,11 @@ export class KeyFilter {
       return true;
     }
     const unfinished = /^\x1b(?:\[\[?[0-?]*[ -/]*|O|[\]P_^X][^\x07]*)?$/.test(this.buffer);
-    if (unfinished && !force) return false;
+    if (unfinished && !force && this.buffer.length < LONGEST_SEQUENCE) return false;
+    // A sequence broken off by something that cannot belong to it.
+    const broken = /^\x1b\[[0-?]*[ -/]*/.exec(this.buffer)?.[0];
     if (unfinished && this.buffer.length > 2) this.buffer = '';
+    else if (!unfinished && broken !== undefined) this.advance(broken.length);
     else if (this.buffer.length === 1 || this.buffer[1] === '\x1b') {
       this.advance(1);
       this.handlers.onKey(plainKey('escape'));
@@ -163,8 +168,9 @@ function keyOfCharacter(character: string): KeyPress | undefined {
   if (character === '\t') return plainKey('tab');
   if (character === '\x7f' || character === '\b') return plainKey('backspace');
   const code = character.codePointAt(0) as number;
+  // Ctrl-space is zero, Ctrl-A to Ctrl-Z are 1 to 26.
   if (code < 27)
-    return { name: 'char', char: String.fromCharCode(code + 96), ctrl: true, meta: false, shift: false };
+    return { ...plainKey('char', code === 0 ? ' ' : String.fromCharCode(code + 96)), ctrl: true };
   if (code < 32 || (code > 0x7f && code < 0xa0)) return undefined;
   return plainKey('char', character);
 }

@@ -71,19 +71,19 @@ const PALETTES: Readonly<Record<Exclude<PaletteName, 'mono'>, Readonly<Record<To
     fresh: ink(32, [0, 120, 40]),
     selected: ink(30, [0, 0, 0], { bold: true }),
   },
-  // Only red: the least that dark-adapted eyes can see by.
+  // Red light alone, without any green or blue: the rods of a dark-adapted eye hardly see it.
   red: {
-    text: ink(31, [190, 40, 30]),
-    dim: ink(31, [110, 24, 18], { dim: true }),
-    title: ink(31, [200, 50, 40]),
-    accent: ink(91, [235, 70, 55]),
-    good: ink(31, [190, 40, 30]),
-    warning: ink(91, [235, 70, 55]),
-    alarm: ink(91, [255, 80, 60], { bold: true }),
-    track: ink(31, [100, 22, 16], { dim: true }),
-    flagged: ink(91, [255, 90, 70], { bold: true }),
-    fresh: ink(91, [235, 70, 55]),
-    selected: ink(91, [255, 100, 80], { bold: true }),
+    text: ink(31, [215, 0, 0]),
+    dim: ink(31, [175, 0, 0], { dim: true }),
+    title: ink(31, [215, 0, 0]),
+    accent: ink(91, [255, 0, 0]),
+    good: ink(31, [215, 0, 0]),
+    warning: ink(91, [255, 0, 0]),
+    alarm: ink(91, [255, 0, 0], { bold: true }),
+    track: ink(31, [135, 0, 0], { dim: true }),
+    flagged: ink(91, [255, 0, 0], { bold: true }),
+    fresh: ink(91, [255, 0, 0]),
+    selected: ink(91, [255, 0, 0], { bold: true }),
   },
 };
 
@@ -103,33 +103,29 @@ const STAR_COLOURS: readonly (readonly [number, number, Rgb])[] = [
   [40_000, 94, [150, 180, 255]],
 ];
 
-/** SGR parameters of a style, without the enclosing escape; empty for plain text. */
-export function sgrOf(style: Style | undefined, look: Look): string {
-  if (style === undefined) return '';
-  const found = inkOf(style.colour, look);
+/** What stands out where there is no colour to say so. */
+const BOLD_WITHOUT_COLOUR: readonly unknown[] = ['flagged', 'selected', 'alarm'] satisfies Token[];
+
+/** SGR parameters of a style, without the enclosing escape; empty where text is left as the terminal has it. */
+export function sgrOf(style: Style | undefined, { palette, depth }: Look): string {
+  const { colour, bold, dim, underline, inverse } = style ?? {};
+  const found = palette === 'mono' || depth === 'none' ? null : inkOf(colour, palette);
+  const isBold = found === null ? BOLD_WITHOUT_COLOUR.includes(colour) : found.bold;
   const parts: string[] = [];
-  if (style.bold === true || found?.bold === true) parts.push('1');
-  if (style.dim === true || (found?.dim === true && look.depth === '16')) parts.push('2');
-  if (style.underline === true) parts.push('4');
-  if (style.inverse === true) parts.push('7');
-  if (found !== null && look.depth !== 'none') parts.push(colourCode(found, look.depth));
+  if (bold === true || isBold === true) parts.push('1');
+  if (dim === true || (found?.dim === true && depth === '16')) parts.push('2');
+  if (underline === true) parts.push('4');
+  if (inverse === true) parts.push('7');
+  if (found !== null && depth !== 'none') parts.push(colourCode(found, depth));
   return parts.join(';');
 }
 
-function inkOf(colour: Style['colour'], look: Look): Ink | null {
-  if (colour === undefined) return look.palette === 'red' ? PALETTES.red.text : null;
-  // Without colour the flagged and selected stay bold, the dim stay dim.
-  if (look.palette === 'mono') return typeof colour === 'string' ? (MONO[colour] ?? null) : null;
-  if (typeof colour === 'string') return PALETTES[look.palette][colour];
-  return starInk(colour.teff_K, look.palette);
+function inkOf(colour: Style['colour'], palette: Exclude<PaletteName, 'mono'>): Ink | null {
+  // Also text without a colour of its own: in red it is red.
+  if (colour === undefined) return PALETTES[palette].text;
+  if (typeof colour === 'string') return PALETTES[palette][colour];
+  return starInk(colour.teff_K, palette);
 }
-
-const NO_COLOUR: Rgb = [-1, -1, -1];
-const MONO: Readonly<Partial<Record<Token, Ink>>> = {
-  flagged: ink(-1, NO_COLOUR, { bold: true }),
-  selected: ink(-1, NO_COLOUR, { bold: true }),
-  alarm: ink(-1, NO_COLOUR, { bold: true }),
-};
 
 function starInk(teff_K: number, palette: Exclude<PaletteName, 'mono'>): Ink | null {
   if (Number.isNaN(teff_K)) return PALETTES[palette].text;
@@ -138,9 +134,9 @@ function starInk(teff_K: number, palette: Exclude<PaletteName, 'mono'>): Ink | n
   if (palette === 'red') {
     // Hot stars brighter, cool stars dimmer: one hue for the eye.
     const share = Math.min(1, Math.log(Math.max(teff_K, 2500) / 2500) / Math.log(12));
-    return ink(share > 0.4 ? 91 : 31, [Math.round(120 + 120 * share), Math.round(26 + 40 * share), 20]);
+    return ink(share > 0.4 ? 91 : 31, [Math.round(135 + 120 * share), 0, 0]);
   }
-  return palette === 'light' ? ink(ansi > 89 ? ansi - 60 : ansi, darker(rgb)) : ink(ansi, rgb);
+  return palette === 'light' ? ink(darkerAnsi(ansi), darker(rgb)) : ink(ansi, rgb);
 }
 
 /** For white paper: the same hue at less than half the light. */
@@ -150,8 +146,13 @@ function darker([r, g, b]: Rgb): Rgb {
   return [deepen(r), deepen(g), deepen(b)];
 }
 
+/** The same of the 16: bright to normal, and white, which paper does not show, to black. */
+function darkerAnsi(ansi: number): number {
+  if (ansi === 97) return 30;
+  return ansi > 89 ? ansi - 60 : ansi;
+}
+
 function colourCode({ ansi, rgb }: Ink, depth: Exclude<ColourDepth, 'none'>): string {
-  if (rgb === NO_COLOUR) return '39';
   if (depth === '16') return String(ansi);
   if (depth === 'true') return `38;2;${rgb.join(';')}`;
   return `38;5;${nearestOf256(rgb)}`;

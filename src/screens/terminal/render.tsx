@@ -17,22 +17,21 @@ export interface ScreenOptions {
 /** A running screen. */
 export interface RunningScreen {
   readonly redraw: () => void;
-  /** Gives the terminal back and lets `done` resolve with the code. */
+  /** Gives the terminal back and lets `done` resolve with the code; the first call counts. */
   readonly stop: (code: number) => void;
   readonly done: Promise<number>;
 }
 
-/** How long an answer of the terminal that is still on its way is waited for. */
-const LAST_ANSWER_MS = 1000;
-
 /** Draws an Ink application on the real terminal until stopped. */
 export function startScreen({ app, onKey, onResize }: ScreenOptions): RunningScreen {
+  let isStopping = false;
   const remote = isRemote(process.env);
   const filter = new KeyFilter(
     {
       onKey: key => {
+        if (isStopping) return;
         // Ctrl-Z belongs to the terminal's life, not to the screens.
-        if (key.name === 'char' && key.ctrl && key.char === 'z') session.suspend();
+        if (key.name === 'char' && key.ctrl && key.char === 'z') void session.suspend();
         else onKey(key);
       },
       onReport: sequence => {
@@ -48,7 +47,8 @@ export function startScreen({ app, onKey, onResize }: ScreenOptions): RunningScr
       output.resize(columns, rows);
       onResize(columns, rows);
     },
-    onResume: () => output.redraw(),
+    onLeave: () => output.pause(),
+    onResume: () => output.resume(),
   });
   const { columns, rows } = session.size;
   const output: InkOutput = new InkOutput(
@@ -68,16 +68,16 @@ export function startScreen({ app, onKey, onResize }: ScreenOptions): RunningScr
     exitOnCtrlC: false,
     patchConsole: false,
   });
+  // Ink catches what a component throws, ends itself and leaves its error page standing: a dead screen.
+  ink.waitUntilExit().catch(error => session.fail(error));
   let finish: (code: number) => void = () => {};
   const done = new Promise<number>(resolve => {
     finish = resolve;
   });
   const stop = async (code: number) => {
-    // A late answer must not land in the shell: it is waited for while the input is still ours.
-    for (let waited = 0; output.awaitsAnswer && waited < LAST_ANSWER_MS; waited += 20) {
-      await new Promise(resolve => setTimeout(resolve, 20));
-    }
-    output.close();
+    if (isStopping) return;
+    isStopping = true;
+    await output.pause();
     ink.unmount();
     session.stop();
     finish(code);

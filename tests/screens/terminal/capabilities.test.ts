@@ -13,10 +13,16 @@ describe('what the terminal can show', () => {
     [{ TERM: 'xterm-256color', COLORTERM: 'truecolor' }, 'true'],
     [{ TERM: 'xterm-256color', NO_COLOR: '1' }, 'none'],
     [{ TERM: 'xterm-256color', NO_COLOR: '' }, '256'],
+    [{ TERM: 'linux' }, '16'],
+    [{ TERM: 'xterm-direct' }, 'true'],
     [{ TERM: 'dumb' }, 'none'],
+    [{ TERM: 'vt100' }, 'none'],
+    [{ TERM: 'vt220' }, 'none'],
     [{}, 'none'],
     [{ TERM: 'dumb', FORCE_COLOR: '3' }, 'true'],
     [{ TERM: 'xterm', FORCE_COLOR: '0' }, 'none'],
+    [{ TERM: 'vt100', FORCE_COLOR: '1' }, '16'],
+    [{ TERM: 'vt100', FORCE_COLOR: '2' }, '256'],
     [{ TERM: 'xterm', FORCE_COLOR: '3', NO_COLOR: '1' }, 'none'],
   ] as const)('colours of %j: %s', (environment, depth) => {
     expect(colourDepth(environment)).toBe(depth);
@@ -28,6 +34,8 @@ describe('what the terminal can show', () => {
     [{ LC_CTYPE: 'de_DE.utf8', TERM: 'screen' }, true],
     [{ LANG: 'de_DE.ISO-8859-1', TERM: 'xterm' }, false],
     [{ LANG: 'en_GB.UTF-8', TERM: 'linux' }, false],
+    [{ LANG: 'en_GB.UTF-8', TERM: 'vt220' }, false],
+    [{ LC_ALL: '', LANG: 'en_GB.UTF-8', TERM: 'xterm' }, true],
     [{ TERM: 'xterm' }, false],
   ])('Unicode of %j: %s', (environment, expected) => {
     expect(speaksUnicode(environment)).toBe(expected);

@@ -73,6 +73,35 @@ describe('CellWriter', () => {
     }
   });
 
+  it('the same with pictures over it and with changes of size', async () => {
+    const writer = new CellWriter(COLUMNS, ROWS);
+    const terminal = newTerminal();
+    let step = 0;
+    for (const frame of frames(200)) {
+      step++;
+      // Every start and length, so that wide characters are cut on both sides.
+      const lines = ['中b', 'x', '\x1b[32m中文\x1b[0m'].slice(step % 3);
+      const overlays = [{ x: step % (COLUMNS + 2), y: step % ROWS, lines }];
+      if (step % 50 === 0) writer.resize(COLUMNS, ROWS);
+      await show(terminal, writer.frame(frame, overlays));
+      const fresh = newTerminal();
+      await show(fresh, new CellWriter(COLUMNS, ROWS).frame(frame, overlays));
+      expect(cellsOf(terminal)).toEqual(cellsOf(fresh));
+      const row =
+        terminal.buffer.active.getLine(overlays[0].y)?.translateToString(false, overlays[0].x) ?? '';
+      const text = lines[0].replace(/\x1b\[\d*m/g, '');
+      if (overlays[0].x + 4 <= COLUMNS) expect(row.startsWith(text)).toBe(true);
+    }
+  });
+
+  it('what stands behind a pictograph stays in place where the terminal draws it narrow', async () => {
+    const writer = new CellWriter(COLUMNS, ROWS);
+    const terminal = newTerminal();
+    // The emulator keeps to Unicode 6, where the telescope is one cell wide.
+    await show(terminal, writer.frame('a\u{1f52d}b|'));
+    expect(terminal.buffer.active.getLine(0)?.getCell(4)?.getChars()).toBe('|');
+  });
+
   it('writes nothing for a frame that is already shown', () => {
     const writer = new CellWriter(COLUMNS, ROWS);
     writer.frame('one\ntwo');
@@ -96,8 +125,8 @@ describe('CellWriter', () => {
 
   it('passes no escape sequence on but its own', () => {
     const writer = new CellWriter(COLUMNS, ROWS);
-    const out = writer.frame('a\x1b]52;c;AAAA\x07b\x1b[2Jc\x07');
+    const out = writer.frame('a\x1b]52;c;AAAA\x07b\x1b[2Jc\x07\x9b2J\x9d0;title\x9c\u202e');
     expect(out).not.toMatch(/\x1b\]/);
-    expect(out.slice('\x1b[0m\x1b[H\x1b[2J'.length)).not.toMatch(/\x1b\[2J|\x07/);
+    expect(out.slice('\x1b[0m\x1b[H\x1b[2J'.length)).not.toMatch(/\x1b\[2J|\x07|[\x7f-\x9f\u202e]/);
   });
 });

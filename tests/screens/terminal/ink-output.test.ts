@@ -39,8 +39,9 @@ describe('the pace', () => {
     }
     expect(written.length).toBeLessThanOrEqual(perSecond + 1);
     expect(written.length).toBeGreaterThan(perSecond / 2);
+    output.write('LAST');
     clock.pass(200);
-    expect(written.at(-1)).toContain('999');
+    expect(written.at(-1)).toContain('LAST');
   });
 
   it('a frame that changes nothing writes nothing', () => {
@@ -62,7 +63,7 @@ describe('the pace', () => {
     output.touch();
     clock.pass(100);
     expect(written).toHaveLength(1);
-    expect(written[0]).toMatch(/frame[^]*picture/);
+    expect(written[0]).toMatch(/frame.*picture/s);
     overlays[0] = { x: 0, y: 1, lines: ['picturE'] };
     output.touch();
     clock.pass(100);
@@ -121,9 +122,9 @@ describe('over a remote link', () => {
     output.answered();
     output.write('two');
     clock.pass(100);
-    output.write('three');
+    output.write('LAST');
     clock.pass(5000);
-    expect(written.at(-1)).toContain('three');
+    expect(written.at(-1)).toContain('LAST');
   });
 
   it('a pause lasts until the terminal owes nothing, a second at most, and writes nothing more', async () => {

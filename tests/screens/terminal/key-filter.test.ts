@@ -45,7 +45,11 @@ describe('KeyFilter', () => {
     ['\x1b[A\x1b[B\x1bOC\x1bOD', ['up', 'down', 'right', 'left']],
     ['\x1b[5~\x1b[6~\x1b[H\x1b[4~', ['pageup', 'pagedown', 'home', 'end']],
     ['\r\t\x7f', ['return', 'tab', 'backspace']],
-    ['\x03\x1a', ['^c', '^z']],
+    ['\x03\x1a\0', ['^c', '^z', '^ ']],
+    ['\x1b[1;5Aq', ['up', 'q']],
+    ['\x1b[12\x1b[A', ['up']],
+    ['\x1b[1;é', ['é']],
+    ['\x1b\x1b[B', ['escape', 'down']],
     ['é⠿', ['é', '⠿']],
     ['\x1bx', ['M-x']],
     ['\x1b[200~two\nlines\x1b[201~q', ['paste:two\nlines', 'q']],
@@ -63,6 +67,31 @@ describe('KeyFilter', () => {
     filter.push('\x1b');
     filter.wait();
     expect(named(filter.keys)).toEqual(['up', 'escape']);
+  });
+
+  it('modifiers come with the key', () => {
+    const filter = makeFilter();
+    filter.push('\x1b[1;6C\x1b[Z\x1b[3;3~');
+    expect(filter.keys).toMatchObject([
+      { name: 'right', ctrl: true, shift: true, meta: false },
+      { name: 'tab', shift: true },
+      { name: 'delete', meta: true, ctrl: false },
+    ]);
+  });
+
+  it('a paste in pieces is one event, with its escapes as text', () => {
+    const filter = makeFilter();
+    for (const piece of ['\x1b[20', '0~a\x1b[A', 'b\x1b[2', '01~', 'q']) filter.push(piece);
+    expect(named(filter.keys)).toEqual(['paste:a\x1b[Ab', 'q']);
+  });
+
+  it('a paste or a report without an end does not take the keys with it for ever', () => {
+    const filter = makeFilter();
+    filter.push('\x1b[200~cut off');
+    filter.wait();
+    filter.push(`\x1b]${'x'.repeat(5000)}`);
+    filter.push('q');
+    expect(named(filter.keys)).toEqual(['paste:cut off', 'q']);
   });
 
   it('characters cut in two by the line arrive whole', () => {
@@ -86,9 +115,12 @@ describe('KeyFilter', () => {
         const filter = makeFilter();
         for (const chunk of chunks) filter.pushBytes(chunk);
         filter.wait();
-        filter.push('q');
+        filter.push('\x1b[201~\x07q');
         filter.wait();
-        expect(filter.keys.length + filter.reports.length).toBeGreaterThan(0);
+        expect(named(filter.keys).at(-1)).toBe('q');
+        for (const key of filter.keys) {
+          if (key.name !== 'paste') expect(key.char).not.toMatch(/[\x00-\x1f\x7f-\x9f]/);
+        }
       }),
       { numRuns: 500, seed: 3 },
     );
