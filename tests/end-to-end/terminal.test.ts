@@ -28,12 +28,14 @@ beforeAll(() => {
 afterEach(() => session?.kill('SIGKILL'));
 afterAll(() => rmSync(folder, { recursive: true, force: true }));
 
-async function watching(columns = 80, rows = 24, env: Record<string, string> = {}): Promise<PtySession> {
-  session = new PtySession('node', [MAIN, 'watch', folder, '--profile', 'northern-80cm'], {
-    columns,
-    rows,
-    env,
-  });
+async function watching(
+  columns = 80,
+  rows = 24,
+  env: Record<string, string> = {},
+  options: readonly string[] = [],
+): Promise<PtySession> {
+  const line = [MAIN, 'watch', folder, '--profile', 'northern-80cm', ...options];
+  session = new PtySession('node', line, { columns, rows, env });
   await session.shows('1 flagged');
   return session;
 }
@@ -105,6 +107,31 @@ describe('a night on the screen', () => {
     expect(screen.screen()).not.toMatch(/[^\x20-\x7e\n]/);
     expect(screen.screen()).toMatch(/white dwarf/);
   }, 30_000);
+});
+
+describe('the red palette', () => {
+  it.each([
+    ['truecolor', { COLORTERM: 'truecolor' }],
+    ['16 colours', { COLORTERM: '', TERM: 'xterm' }],
+  ])(
+    '%s: no text on any screen has another colour',
+    async (_, env) => {
+      const screen = await watching(120, 36, env, ['--palette', 'red']);
+      expect(screen.textWithoutRed()).toBe('');
+      for (const [key, shown] of [
+        ['s', 'by merit of the flags'],
+        ['q', 'Shortlist'],
+        ['f', 'files'],
+        ['?', 'Quits from anywhere'],
+      ] as const) {
+        screen.type(key);
+        await screen.shows(shown);
+        await screen.settled();
+        expect(screen.textWithoutRed()).toBe('');
+      }
+    },
+    30_000,
+  );
 });
 
 describe('every way out leaves the terminal whole', () => {

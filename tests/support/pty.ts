@@ -79,6 +79,20 @@ export class PtySession {
     return lines.join('\n');
   }
 
+  /** The text on the screen that is drawn in anything but pure red. */
+  textWithoutRed(): string {
+    const buffer = this.terminal.buffer.active;
+    let text = '';
+    for (let y = 0; y < this.terminal.rows; y++) {
+      const line = buffer.getLine(buffer.baseY + y);
+      for (let x = 0; x < this.terminal.cols; x++) {
+        const cell = line?.getCell(x);
+        if (cell !== undefined && cell.getChars().trim() !== '' && !isRed(cell)) text += cell.getChars();
+      }
+    }
+    return text;
+  }
+
   get onAlternateScreen(): boolean {
     return this.terminal.buffer.active.type === 'alternate';
   }
@@ -112,3 +126,15 @@ export class PtySession {
     });
   }
 }
+
+type Cell = NonNullable<
+  ReturnType<NonNullable<ReturnType<PtySession['terminal']['buffer']['active']['getLine']>>['getCell']>
+>;
+
+function isRed(cell: Cell): boolean {
+  const colour = cell.getFgColor();
+  return cell.isFgRGB() ? (colour & 0xffff) === 0 : cell.isFgPalette() && RED_INDICES.includes(colour);
+}
+
+/** Red and bright red of the 16, and the pure reds of the cube of the 256. */
+const RED_INDICES = [1, 9, 52, 88, 124, 160, 196];

@@ -2,11 +2,24 @@ import { Text } from 'ink';
 import { type CellProps, Table } from 'ink-table';
 import { createContext, type PropsWithChildren, useContext } from 'react';
 import { asciiText } from '../pictures/ascii-only.js';
+import type { Look } from '../terminal/look.js';
 
 /** A row of ready-made texts by column title. `isCurrent` is no column: it marks the row of the cursor. */
 export type TableRow = Readonly<Record<string, string | boolean>>;
 
 const CurrentRow = createContext(false);
+
+/** Colour of all the table's text; without one it is the terminal's own. */
+const TableColour = createContext<{ color?: string }>({});
+
+const RED = { color: '#d70000' };
+const NO_COLOUR = {};
+
+/** Only the red palette colours the table: nothing on the screen may spoil dark-adapted eyes. */
+export function TableLook({ look, children }: PropsWithChildren<{ look: Look }>) {
+  const isRed = look.palette === 'red' && look.depth !== 'none';
+  return <TableColour.Provider value={isRed ? RED : NO_COLOUR}>{children}</TableColour.Provider>;
+}
 
 /** ink-table puts the index of a row at the end of its separator's key. */
 const FIRST_SEPARATOR = /-0$/;
@@ -33,21 +46,29 @@ const NOTHING = <></>;
 export function TableCell({ children }: CellProps) {
   const isCurrent = useContext(CurrentRow);
   return (
-    <Text bold={isCurrent} inverse={isCurrent}>
+    <Text {...useContext(TableColour)} bold={isCurrent} inverse={isCurrent}>
       {children}
     </Text>
   );
 }
 
 export function TableHeading({ children }: PropsWithChildren) {
-  return <Text bold>{children}</Text>;
+  return (
+    <Text {...useContext(TableColour)} bold>
+      {children}
+    </Text>
+  );
 }
 
 export function TableLine({ children }: PropsWithChildren) {
-  return <Text dimColor>{children}</Text>;
+  return (
+    <Text {...useContext(TableColour)} dimColor>
+      {children}
+    </Text>
+  );
 }
 
 /** The lines of the table where the terminal shows ASCII only. */
 export function AsciiTableLine({ children }: PropsWithChildren) {
-  return <Text dimColor>{asciiText(String(children))}</Text>;
+  return <TableLine>{asciiText(String(children))}</TableLine>;
 }

@@ -16,6 +16,7 @@ import {
   TableCell,
   TableHeading,
   TableLine,
+  TableLook,
   type TableRow,
 } from './star-table.js';
 
@@ -59,12 +60,14 @@ function TableBody({ state, current }: { state: ScreenState; current: number }) 
     return { ...Object.fromEntries(cells), isCurrent: star === current };
   });
   return (
-    <StarTable
-      data={data}
-      columns={shown.map(column => ({ key: column.title, align: column.alignRight ? 'right' : 'left' }))}
-      cell={TableCell}
-      header={TableHeading}
-      skeleton={plain ? AsciiTableLine : TableLine}
-    />
+    <TableLook look={look}>
+      <StarTable
+        data={data}
+        columns={shown.map(column => ({ key: column.title, align: column.alignRight ? 'right' : 'left' }))}
+        cell={TableCell}
+        header={TableHeading}
+        skeleton={plain ? AsciiTableLine : TableLine}
+      />
+    </TableLook>
   );
 }
