@@ -30,6 +30,8 @@ describe('altitude, azimuth, Sun and Moon against Astropy', () => {
       expect(Math.abs(ephemeris.moonAltitude_deg(time_ms) - row.number('moon_alt_deg'))).toBeLessThan(0.01);
       expect(Math.abs(ephemeris.sunAltitude_deg(time_ms) - row.number('sun_alt_deg'))).toBeLessThan(0.003);
       expect(Math.abs(ephemeris.moonIllumination(time_ms) - row.number('moon_illum'))).toBeLessThan(0.0003);
+      const phaseAngle = ephemeris.moonPhaseAngle_deg(time_ms);
+      expect(Math.abs(phaseAngle - row.number('moon_phase_angle_deg'))).toBeLessThan(0.02);
       const moon = ephemeris.moonDirection(time_ms);
       const star = ephemeris.aberrationAt(time_ms)(direction);
       const separation =

@@ -1,4 +1,4 @@
-import { describe } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import {
   exposureTime_s,
   magnitudeError_mag,
@@ -11,7 +11,7 @@ import {
   countRate_ePerS,
   zeroPoint_mag,
 } from '../../src/science/photometry/count-rate.js';
-import { type Check, testChecks } from './checks.js';
+import { type Check, readChecks, testChecks } from './checks.js';
 import text from './data/checks_ccd.csv';
 
 /** The files count background pixels separately; our noise carries the factor already. */
@@ -48,6 +48,8 @@ const solvable = (check: Check) => check.input('flat_floor') === 0;
 const snr = (check: Check) => signalToNoise(check.input('N_star'), framed(check), 1, 1);
 
 describe('CCD equation, exposure time and count rate', () => {
+  it('reads every row of the file', () => expect(readChecks(text)).toHaveLength(83));
+
   testChecks(text, {
     snr,
     mag_error: check => magnitudeError_mag(snr(check)),

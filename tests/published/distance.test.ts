@@ -1,6 +1,6 @@
-import { describe } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { distancePosterior } from '../../src/science/distance/distance-posterior.js';
-import { type Check, testChecks } from './checks.js';
+import { type Check, readChecks, testChecks } from './checks.js';
 import text from './data/checks_distance.csv';
 
 const posterior = (check: Check) =>
@@ -11,6 +11,8 @@ const magnitudeAt = (share: number) => (check: Check) =>
 const arithmetic = { notOurs: 'plain arithmetic, done inside the track fit' };
 
 describe('distance posterior, Bailer-Jones 2015', () => {
+  it('reads every row of the file', () => expect(readChecks(text)).toHaveLength(209));
+
   testChecks(text, {
     distance_inverse: arithmetic,
     M_from_parallax: arithmetic,

@@ -41,6 +41,8 @@ const WAVELENGTH: Readonly<Record<string, number>> = {
 };
 
 describe('airmass', () => {
+  it('reads every row of the file', () => expect(readChecks(airmassText)).toHaveLength(138));
+
   testChecks(airmassText, {
     kasten_young_1989: otherFormula,
     pickering_2002: otherFormula,

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { Site } from '../../src/follow/settings.js';
-import { Ephemeris } from '../../src/follow/sky/ephemeris.js';
+import { directionOf, Ephemeris } from '../../src/follow/sky/ephemeris.js';
 import { nightOf } from '../../src/follow/sky/night-of.js';
 import { NightSky } from '../../src/follow/sky/window.js';
 import { parseTable, type Row } from '../../src/science/table.js';
@@ -53,6 +53,7 @@ describe('twilight, rise and set against Astropy', () => {
   });
 
   const lunar = rows.filter(row => /^moon_centre/.test(row.text('event')));
+  it('covers the Moon at nineteen nights', () => expect(lunar.length).toBe(38));
   it.each(
     lunar.map(
       row =>
@@ -64,6 +65,55 @@ describe('twilight, rise and set against Astropy', () => {
       row,
     );
   });
+});
+
+const LIMB_ROWS = 38;
+const STEP_MS = 60_000;
+
+/** Altitude of a row's target, independent of the windows. */
+function altitudeOf(row: Row): (time_ms: number) => number {
+  const ephemeris = new Ephemeris(siteOf(row));
+  const direction = directionOf(row.number('target_ra_icrs_deg'), row.number('target_dec_icrs_deg'));
+  return time_ms => ephemeris.starPlace(direction, time_ms).altitude_deg;
+}
+
+describe('altitudes of targets against Astropy', () => {
+  const targets = rows.filter(row => row.text('event').startsWith('target_'));
+  it('covers three targets at nineteen nights, and no row is left over', () => {
+    const others = rows.filter(row =>
+      /^(sun|civil|nautical|astronomical|moon_centre)/.test(row.text('event')),
+    );
+    // The limb of the Moon is not what is asked for: its light begins with its centre.
+    expect(rows.filter(row => row.text('event').endsWith('upper_limb_34arcmin'))).toHaveLength(LIMB_ROWS);
+    expect(targets).toHaveLength(171);
+    expect(targets.length + others.length + LIMB_ROWS).toBe(rows.length);
+  });
+
+  it.each(targets.map(row => [`row ${row.text('row')} ${row.text('event')}`, row] as const))(
+    '%s',
+    (_, row) => {
+      const at = altitudeOf(row);
+      const sign = row.text('event').startsWith('target_rises') ? 1 : -1;
+      if (row.text('utc') === 'none') {
+        const minutes = Array.from({ length: 1441 }, (_, i) => at(noonOf(row) + i * STEP_MS));
+        const passes = minutes.some(
+          (high, i) => i > 0 && sign * (high - 30) >= 0 && sign * (minutes[i - 1] - 30) < 0,
+        );
+        expect(passes).toBe(false);
+        return;
+      }
+      const time = Date.parse(`${row.text('utc')}Z`);
+      const expected_deg = row.number('altitude_deg');
+      if (row.text('event') === 'target_transit') {
+        expect(Math.abs(at(time) - expected_deg)).toBeLessThan(0.001);
+        return;
+      }
+      // The sky turns by at most 15 arcsec a second: the time agrees if the limit lies between just before and after.
+      const slack_ms = 1000 * row.number('tol_s');
+      expect(sign * (at(time - slack_ms) - expected_deg)).toBeLessThan(0);
+      expect(sign * (at(time + slack_ms) - expected_deg)).toBeGreaterThan(0);
+    },
+  );
 });
 
 describe('windows above 30 degrees against the same crossings', () => {

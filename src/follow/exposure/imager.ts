@@ -1,4 +1,6 @@
 import type { Passband } from '../../science/passbands.js';
+import { bestRadius_fwhm } from '../../science/photometry/aperture.js';
+import { exposureTime_s } from '../../science/photometry/ccd-equation.js';
 import {
   collectingArea_cm2,
   countRate_ePerS,
@@ -6,7 +8,6 @@ import {
   zeroPoint_mag,
 } from '../../science/photometry/count-rate.js';
 import {
-  bestRadius_fwhm,
   enclosedFraction,
   peakPixelFraction,
   SMALL_TELESCOPE_BETA,
@@ -14,14 +15,8 @@ import {
 import { scintillation_s } from '../../science/photometry/scintillation.js';
 import { seeing_arcsec } from '../../science/photometry/seeing.js';
 import type { BandSettings, ImagerSetup, Telescope } from '../settings.js';
-import type { Rates } from './plan-exposure.js';
+import { BETTER_SEEING, type Rates } from './plan-exposure.js';
 import type { Conditions } from './suggestion.js';
-
-/** Peak pixels are worked out for seeing that gets this much better meanwhile. */
-const BETTER_SEEING = 0.8;
-
-const RADIUS_FWHM = bestRadius_fwhm(SMALL_TELESCOPE_BETA);
-const IN_APERTURE = enclosedFraction(RADIUS_FWHM, SMALL_TELESCOPE_BETA);
 
 /** Magnitude of 1 e-/s above the atmosphere in a band of this telescope. */
 export function bandZeroPoint_mag(telescope: Telescope, band: BandSettings, passband: Passband): number {
@@ -34,8 +29,8 @@ export function bandZeroPoint_mag(telescope: Telescope, band: BandSettings, pass
 }
 
 /**
- * Rates in the aperture that is best against the sky, for a Moffat image. The
- * background is taken as well known (many pixels).
+ * Rates of a star of the given magnitude, for a Moffat image, in the aperture that reaches the setup's S/N soonest:
+ * small against the sky for a faint star, wide for a bright one. The background is taken as well known (many pixels).
  */
 export function imagerRates(
   telescope: Telescope,
@@ -48,6 +43,7 @@ export function imagerRates(
   const zeroPoint = bandZeroPoint_mag(telescope, band, passband);
   const { detector } = setup;
   const fwhm_arcsec = seeing_arcsec(conditions.seeing_arcsec, conditions.airmass, passband.wavelength_nm);
+  const pixel_fwhm = detector.pixel_arcsec / fwhm_arcsec;
   const star_ePerS = countRate_ePerS(
     mag + conditions.cloud_mag,
     zeroPoint,
@@ -56,16 +52,23 @@ export function imagerRates(
   );
   const sky = conditions.sky_magPerArcsec2(band, passband.wavelength_nm);
   const background = skyRate_ePerSPerPixel(sky, zeroPoint, detector.pixel_arcsec ** 2) + detector.dark_ePerS;
-  const pixel_fwhm = detector.pixel_arcsec / fwhm_arcsec;
-  return {
-    signal_ePerS: star_ePerS * IN_APERTURE,
+  const scintillation = scintillation_s(telescope.aperture_m, conditions.airmass, conditions.siteHeight_m);
+  const within = (radius_fwhm: number) => ({
+    signal_ePerS: star_ePerS * enclosedFraction(radius_fwhm, SMALL_TELESCOPE_BETA),
     noise: {
-      pixels: (Math.PI * RADIUS_FWHM ** 2) / pixel_fwhm ** 2,
+      pixels: (Math.PI * radius_fwhm ** 2) / pixel_fwhm ** 2,
       background_ePerSPerPixel: background,
       readNoise_e: detector.readNoise_e,
       gain_ePerAdu: detector.gain_ePerAdu,
-      scintillation_s: scintillation_s(telescope.aperture_m, conditions.airmass, conditions.siteHeight_m),
+      scintillation_s: scintillation,
     },
+  });
+  const radius_fwhm = bestRadius_fwhm(radius => {
+    const { signal_ePerS, noise } = within(radius);
+    return -exposureTime_s(setup.targetSnr, signal_ePerS, noise, setup.minCount);
+  });
+  return {
+    ...within(radius_fwhm),
     peak_ePerS: star_ePerS * peakPixelFraction(pixel_fwhm / BETTER_SEEING, SMALL_TELESCOPE_BETA),
   };
 }

@@ -4,7 +4,8 @@ import {
   signalToNoise,
   splitExposure,
 } from '../../science/photometry/ccd-equation.js';
-import type { Detector, Setup } from '../settings.js';
+import { pixelLimit_e, saturationTime_s } from '../../science/photometry/saturation.js';
+import type { Setup } from '../settings.js';
 
 /** Signal and noise of one star in one setup, per second. */
 export interface Rates {
@@ -12,12 +13,6 @@ export interface Rates {
   readonly noise: Noise;
   /** Electrons per second of the star in its brightest pixel, without the background. */
   readonly peak_ePerS: number;
-}
-
-/** The same for a star brighter or fainter by some magnitudes. */
-export function fainterBy(rates: Rates, shift_mag: number): Rates {
-  const factor = 10 ** (-0.4 * shift_mag);
-  return { ...rates, signal_ePerS: rates.signal_ePerS * factor, peak_ePerS: rates.peak_ePerS * factor };
 }
 
 /** Number and length of the exposures, or the words that say why not. */
@@ -32,56 +27,59 @@ export interface PlannedExposure {
 
 /** Exposures are kept below this share of what the detector can hold (common practice). */
 const SAFE_SHARE = 0.7;
+/** Peak pixels are worked out for seeing that gets this much better meanwhile. */
+export const BETTER_SEEING = 0.8;
 /** Below this no shutter and no readout is to be trusted. */
 const SHORTEST_S = 0.1;
 /** A star needs this much signal to be seen at all (common practice). */
 const LEAST_SNR = 4;
-
-/** Electrons a pixel may collect: the well, or where the digits end. */
-export function pixelLimit_e(detector: Detector): number {
-  return Math.min(detector.fullWell_e, (2 ** detector.bits - 1) * detector.gain_ePerAdu);
-}
+/** An S/N this close to the wanted one counts as reached. */
+const CLOSE_ENOUGH = 0.999;
 
 /** Solves for the setup's S/N, splits by saturation and the longest exposure, and rounds to tidy times. */
 export function planExposure(setup: Setup, rates: Rates): PlannedExposure {
-  const saturation_s =
-    (SAFE_SHARE * pixelLimit_e(setup.detector)) / (rates.peak_ePerS + rates.noise.background_ePerSPerPixel);
+  const { detector } = setup;
+  const { signal_ePerS, noise, peak_ePerS } = rates;
+  if (Number.isNaN(noise.background_ePerSPerPixel)) return DAYLIGHT;
+  const limit_e = SAFE_SHARE * pixelLimit_e(detector.fullWell_e, detector.bits, detector.gain_ePerAdu);
+  const saturation_s = saturationTime_s(limit_e, peak_ePerS, noise.background_ePerSPerPixel);
   if (saturation_s < SHORTEST_S) {
     return impossible(`too bright: the peak pixel fills in ${(saturation_s / SAFE_SHARE).toPrecision(1)} s`);
   }
   const longest_s = Math.min(setup.maxSingle_s, saturation_s);
-  const { time_s, count } = splitExposure(
-    setup.targetSnr,
-    rates.signal_ePerS,
-    rates.noise,
-    longest_s,
-    setup.minCount,
+  const split = splitExposure(setup.targetSnr, signal_ePerS, noise, longest_s, setup.minCount);
+  const each_s = tidyTime_s(split.time_s / split.count, longest_s);
+  // Rounding down at the limit costs signal. S/N grows as the square root of the number of equal exposures, which
+  // tells how many make up for it.
+  const wanted = setup.targetSnr * CLOSE_ENOUGH;
+  const count = Math.max(
+    split.count,
+    Math.ceil((wanted / signalToNoise(signal_ePerS, noise, each_s, 1)) ** 2 - 1e-9),
   );
-  const each_s = tidyTime_s(time_s / count, longest_s);
-  // Rounding down at the limit may cost a little: one more exposure then makes up for it.
-  const enough =
-    signalToNoise(rates.signal_ePerS, rates.noise, each_s * count, count) >= setup.targetSnr * 0.999;
-  const taken = enough ? count : count + 1;
-  const total_s = setup.acquire_s + taken * (each_s + setup.detector.readout_s);
-  const snr = signalToNoise(rates.signal_ePerS, rates.noise, each_s * taken, taken);
+  const total_s = wallTime_s(setup, count, each_s);
   if (!(total_s <= setup.maxTotal_s)) return tooFaint(setup, rates, longest_s);
   return {
     possible: true,
-    count: taken,
+    count,
     each_s,
     total_s,
-    snr,
-    limitedBy: limitOf(rates, taken, each_s, saturation_s <= setup.maxSingle_s && taken > setup.minCount),
+    snr: signalToNoise(signal_ePerS, noise, each_s * count, count),
+    limitedBy: limitOf(rates, count, each_s, saturation_s <= setup.maxSingle_s && count > setup.minCount),
   };
+}
+
+/** Time on the clock: acquisition, exposures and readouts. */
+export function wallTime_s(setup: Setup, count: number, each_s: number): number {
+  return setup.acquire_s + count * (each_s + setup.detector.readout_s);
 }
 
 /** What can be had in the longest time allowed. */
 function tooFaint(setup: Setup, rates: Rates, longest_s: number): PlannedExposure {
-  const open = setup.maxTotal_s - setup.acquire_s;
-  const count = Math.max(1, Math.floor(open / (longest_s + setup.detector.readout_s)));
   const each_s = tidyTime_s(longest_s, longest_s);
+  const open_s = setup.maxTotal_s - setup.acquire_s;
+  const count = Math.max(1, Math.floor(open_s / (each_s + setup.detector.readout_s)));
   const snr = signalToNoise(rates.signal_ePerS, rates.noise, count * each_s, count);
-  const reached = snr < LEAST_SNR ? 'not reliably detectable' : `S/N ${snr.toFixed(0)} at most`;
+  const reached = snr < LEAST_SNR ? 'not reliably detectable' : `S/N ${Math.floor(snr)} at most`;
   return impossible(`too faint: ${reached} in ${Math.round(setup.maxTotal_s / 60)} min`);
 }
 
@@ -95,6 +93,9 @@ function impossible(why: string): PlannedExposure {
     limitedBy: why,
   };
 }
+
+/** No sky brightness is known there (see `Conditions`). */
+const DAYLIGHT = impossible('daylight: the Sun is less than 5 deg below the horizon');
 
 /** Times people set: 0.1 s below 1 s, 0.5 s below 10, whole seconds to 30, then fives; never above the limit. */
 export function tidyTime_s(time_s: number, limit_s: number): number {

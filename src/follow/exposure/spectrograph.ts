@@ -2,8 +2,13 @@ import type { Passband } from '../../science/passbands.js';
 import { collectingArea_cm2 } from '../../science/photometry/count-rate.js';
 import { SMALL_TELESCOPE_BETA, slitFraction } from '../../science/photometry/moffat.js';
 import { seeing_arcsec } from '../../science/photometry/seeing.js';
+import {
+  type SpectralPixel,
+  slitSkyRate_ePerSPerPixel,
+  spectralRate_ePerSPerPixel,
+} from '../../science/photometry/spectrum.js';
 import type { BandSettings, SpectrographSetup, Telescope } from '../settings.js';
-import type { Rates } from './plan-exposure.js';
+import { BETTER_SEEING, type Rates } from './plan-exposure.js';
 import type { Conditions } from './suggestion.js';
 
 /** Rows extracted along the slit, in units of the seeing (common practice: both wings of the profile). */
@@ -32,27 +37,23 @@ export function spectrographRates(
   if (nearest === undefined || Number.isNaN(flux)) return undefined;
   const { settings, passband } = nearest;
   const { detector } = setup;
-  const collected = collectingArea_cm2(telescope.aperture_m, telescope.obstruction) * setup.throughput;
-  const dispersion_APerPixel = setup.dispersion_nmPerPixel * 10;
+  const pixel: SpectralPixel = {
+    area_cm2: collectingArea_cm2(telescope.aperture_m, telescope.obstruction),
+    throughput: setup.throughput,
+    width_Angstrom: setup.dispersion_nmPerPixel * 10,
+  };
   const fwhm_arcsec = seeing_arcsec(conditions.seeing_arcsec, conditions.airmass, setup.wavelength_nm);
   const absorbed =
     10 ** (-0.4 * (settings.extinction_magPerAirmass * conditions.airmass + conditions.cloud_mag));
-  const slit = slitFraction(setup.slit_arcsec / fwhm_arcsec, SMALL_TELESCOPE_BETA);
-  const perPixel_ePerS = flux * absorbed * collected * slit * dispersion_APerPixel;
-  const sky = conditions.sky_magPerArcsec2(settings, passband.wavelength_nm);
-  // The sky fills the slit: no loss, and its brightness is as seen from the ground.
-  const skyPerPixel_ePerS =
-    passband.photonFlux *
-    10 ** (-0.4 * sky) *
-    collected *
-    dispersion_APerPixel *
-    setup.slit_arcsec *
-    detector.pixel_arcsec;
+  const through = (share: number) => spectralRate_ePerSPerPixel(flux * absorbed, share, pixel);
+  const skyFlux =
+    passband.photonFlux * 10 ** (-0.4 * conditions.sky_magPerArcsec2(settings, passband.wavelength_nm));
+  const background =
+    slitSkyRate_ePerSPerPixel(skyFlux, setup.slit_arcsec, detector.pixel_arcsec, pixel) + detector.dark_ePerS;
   const pixelsPerElement = Math.max(1, setup.resolution_nm / setup.dispersion_nmPerPixel);
   const rows = (EXTRACTION_FWHM * fwhm_arcsec) / detector.pixel_arcsec;
-  const background = skyPerPixel_ePerS + detector.dark_ePerS;
   return {
-    signal_ePerS: perPixel_ePerS * pixelsPerElement,
+    signal_ePerS: through(slitShare(setup.slit_arcsec, fwhm_arcsec)) * pixelsPerElement,
     noise: {
       pixels: rows * pixelsPerElement,
       background_ePerSPerPixel: background,
@@ -62,6 +63,13 @@ export function spectrographRates(
       scintillation_s: 0,
     },
     // Along the slit the image is a line one pixel wide in wavelength: its brightest row.
-    peak_ePerS: perPixel_ePerS * slitFraction(detector.pixel_arcsec / fwhm_arcsec, SMALL_TELESCOPE_BETA),
+    peak_ePerS:
+      through(slitShare(setup.slit_arcsec, BETTER_SEEING * fwhm_arcsec)) *
+      slitShare(detector.pixel_arcsec, BETTER_SEEING * fwhm_arcsec),
   };
+}
+
+/** Share of the light in a strip through the middle of the image. */
+function slitShare(width_arcsec: number, fwhm_arcsec: number): number {
+  return slitFraction(width_arcsec / fwhm_arcsec, SMALL_TELESCOPE_BETA);
 }

@@ -3,7 +3,7 @@ import type { PredictedMagnitudes } from '../../science/odds/index.js';
 import { type Passband, photonFluxAt, readPassbands } from '../../science/passbands.js';
 import type { Profile, Setup } from '../settings.js';
 import { imagerRates } from './imager.js';
-import { fainterBy, type PlannedExposure, planExposure, type Rates } from './plan-exposure.js';
+import { type PlannedExposure, planExposure, type Rates } from './plan-exposure.js';
 import { type KnownBands, spectrographRates } from './spectrograph.js';
 import type { Conditions, ExposureSuggestion } from './suggestion.js';
 
@@ -28,9 +28,10 @@ export class ExposureAdviser {
   suggestFor(setup: Setup, predicted: PredictedMagnitudes, conditions: Conditions): ExposureSuggestion {
     const index = BAND_INDEX[setup.kind === 'imager' ? setup.band : this.bandNear(setup.wavelength_nm)];
     const sigma = predicted.sigma_mag[index];
-    const rates = this.rates(setup, predicted.mag, conditions);
-    const shifted = (shift: number): PlannedExposure =>
-      rates === undefined ? UNKNOWN : planExposure(setup, fainterBy(rates, shift));
+    const shifted = (fainter_mag: number): PlannedExposure => {
+      const rates = this.rates(setup, predicted.mag, fainter_mag, conditions);
+      return rates === undefined ? UNKNOWN : planExposure(setup, rates);
+    };
     const middle = shifted(0);
     return {
       setup: setup.name,
@@ -47,14 +48,20 @@ export class ExposureAdviser {
     };
   }
 
-  private rates(setup: Setup, mags: Float64Array, conditions: Conditions): Rates | undefined {
+  /** For a star that is some magnitudes fainter than predicted; undefined where its brightness is not known. */
+  private rates(
+    setup: Setup,
+    mags: Float64Array,
+    fainter_mag: number,
+    conditions: Conditions,
+  ): Rates | undefined {
     const { telescope } = this.profile;
     if (setup.kind === 'spectrograph') {
       const flux = photonFluxAt(this.passbands, mags, setup.wavelength_nm);
-      return spectrographRates(telescope, this.known, setup, conditions, flux);
+      return spectrographRates(telescope, this.known, setup, conditions, flux * 10 ** (-0.4 * fainter_mag));
     }
     const band = this.known.find(entry => entry.settings.band === setup.band);
-    const mag = mags[BAND_INDEX[setup.band]];
+    const mag = mags[BAND_INDEX[setup.band]] + fainter_mag;
     if (band === undefined || Number.isNaN(mag)) return undefined;
     return imagerRates(telescope, band.settings, band.passband, setup, conditions, mag);
   }
@@ -79,5 +86,5 @@ const UNKNOWN: PlannedExposure = {
   each_s: Number.NaN,
   total_s: Number.NaN,
   snr: Number.NaN,
-  limitedBy: 'brightness in the band not known',
+  limitedBy: 'not known: the brightness in this band',
 };

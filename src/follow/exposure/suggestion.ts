@@ -28,6 +28,6 @@ export interface Conditions {
   readonly siteHeight_m: number;
   /** Transparency lost to cloud, magnitudes. */
   readonly cloud_mag: number;
-  /** Brightness of the sky at the target in a band of the profile, mag/arcsec^2. */
+  /** Brightness of the sky at the target in a band of the profile, mag/arcsec^2; NaN in daylight (Sun above -5 deg). */
   readonly sky_magPerArcsec2: (band: BandSettings, wavelength_nm: number) => number;
 }

@@ -4,6 +4,8 @@ import type { Ephemeris } from './ephemeris.js';
 const DAY_MS = 86_400_000;
 /** Upper limb on the horizon: 34 arcmin of refraction and 16 of radius (the usual definition). */
 const SUNSET_ALTITUDE_DEG = -0.8333;
+/** A search that starts on a passing may find it again; one this much later does not. */
+const PAST_MS = 30_000;
 
 /** One night of a site, Unix ms; NaN where something does not happen (polar day or night). */
 export interface Night {
@@ -29,17 +31,18 @@ export interface Twilight {
 /** The night a time belongs to: the running one, else the coming one. */
 export function nightOf(ephemeris: Ephemeris, site: Site, time_ms: number): Night {
   const noon = lastNoon(site, time_ms);
-  const sunrise = ephemeris.nextSunAltitude_ms(true, SUNSET_ALTITUDE_DEG, noon, 1);
+  const sunrise = sunBelow(ephemeris, noon, SUNSET_ALTITUDE_DEG).dawn_ms;
   return nightFrom(ephemeris, site, time_ms > sunrise ? noon + DAY_MS : noon);
 }
 
 function nightFrom(ephemeris: Ephemeris, site: Site, noon: number): Night {
   const below = (altitude_deg: number) => sunBelow(ephemeris, noon, altitude_deg);
+  const down = below(SUNSET_ALTITUDE_DEG);
   return {
     noon_ms: noon,
     nextNoon_ms: noon + DAY_MS,
-    sunset_ms: ephemeris.nextSunAltitude_ms(false, SUNSET_ALTITUDE_DEG, noon, 1),
-    sunrise_ms: ephemeris.nextSunAltitude_ms(true, SUNSET_ALTITUDE_DEG, noon, 1),
+    sunset_ms: down.dusk_ms === noon ? Number.NaN : down.dusk_ms,
+    sunrise_ms: down.dawn_ms === noon + DAY_MS ? Number.NaN : down.dawn_ms,
     civil: below(-6),
     nautical: below(-12),
     astronomical: below(-18),
@@ -47,14 +50,25 @@ function nightFrom(ephemeris: Ephemeris, site: Site, noon: number): Night {
   };
 }
 
+/**
+ * Longest stretch between two noons with the Sun below an altitude; both NaN when there is none. Near the poles it may
+ * begin or end at a noon, and the Sun may come up for minutes at either.
+ */
 function sunBelow(ephemeris: Ephemeris, noon: number, altitude_deg: number): Twilight {
-  const dusk = ephemeris.nextSunAltitude_ms(false, altitude_deg, noon, 1);
-  const dawn = ephemeris.nextSunAltitude_ms(true, altitude_deg, noon, 1);
-  // In a polar night the Sun may stay below the limit from noon to noon.
-  if (Number.isNaN(dusk) && Number.isNaN(dawn) && ephemeris.sunAltitude_deg(noon) < altitude_deg) {
-    return { dusk_ms: noon, dawn_ms: noon + DAY_MS };
+  const nextNoon = noon + DAY_MS;
+  const nextPassing = (rising: boolean, from_ms: number) =>
+    from_ms < nextNoon
+      ? ephemeris.nextSunAltitude_ms(rising, altitude_deg, from_ms, (nextNoon - from_ms) / DAY_MS)
+      : Number.NaN;
+  let longest: Twilight = { dusk_ms: Number.NaN, dawn_ms: Number.NaN };
+  let dusk = ephemeris.sunAltitude_deg(noon) < altitude_deg ? noon : nextPassing(false, noon);
+  while (dusk < nextNoon) {
+    const rise = nextPassing(true, dusk + PAST_MS);
+    const dawn = Number.isNaN(rise) ? nextNoon : Math.min(rise, nextNoon);
+    if (!(dawn - dusk <= longest.dawn_ms - longest.dusk_ms)) longest = { dusk_ms: dusk, dawn_ms: dawn };
+    dusk = nextPassing(false, dawn + PAST_MS);
   }
-  return { dusk_ms: Number.isNaN(dawn) ? Number.NaN : dusk, dawn_ms: Number.isNaN(dusk) ? Number.NaN : dawn };
+  return longest;
 }
 
 /** Mean solar noon before a time; the equation of time does not matter here. */

@@ -3,6 +3,7 @@ import type { Site } from '../settings.js';
 import { type Direction, directionOf, type Ephemeris } from './ephemeris.js';
 import { clock, type Night } from './night-of.js';
 import type { SkyGeometry } from './sky-light.js';
+import { type Span, TimeGrid } from './time-grid.js';
 
 const RADIAN = Math.PI / 180;
 const STEP_MS = 5 * 60_000;
@@ -25,16 +26,24 @@ export interface StarTonight {
   readonly now_ms: number;
   readonly altitudeNow_deg: number;
   readonly airmassNow: number;
-  readonly spans: readonly (readonly [number, number])[];
+  readonly spans: readonly Span[];
   readonly whyNever: () => string;
 }
 
+/** What is the same for all stars at one time. */
 interface Moment {
   readonly time_ms: number;
   readonly zenith: Direction;
   readonly moon: Direction;
   readonly moonAltitude_deg: number;
+  readonly phaseAngle_deg: number;
   readonly sunAltitude_deg: number;
+}
+
+/** One star on the night's grid: smooth values, so that the parabolas between the points hold. */
+interface Path {
+  readonly sinAltitude: readonly number[];
+  readonly cosMoonDistance: readonly number[];
 }
 
 /**
@@ -42,13 +51,12 @@ interface Moment {
  * in it is good to an arcsecond, far below what a window needs.
  */
 export class NightSky {
-  private readonly times: Float64Array;
-  private readonly zenith: readonly Direction[];
-  private readonly moon: readonly Direction[];
+  private readonly grid: TimeGrid;
+  private readonly moments: readonly Moment[];
   private readonly moonAltitude_deg: readonly number[];
-  private readonly sunAltitude_deg: readonly number[];
-  private readonly phaseAngle_deg: number;
   private readonly limit_deg: number;
+  private readonly sinLimit: number;
+  private readonly cosMoonLimit: number;
   /** The Earth's motion turns by a degree a day: one aberration serves the night. */
   private readonly toApparent: (direction: Direction) => Direction;
   private kept: Moment | undefined;
@@ -59,35 +67,30 @@ export class NightSky {
     private readonly site: Site,
     readonly night: Night,
   ) {
-    const { dusk_ms, dawn_ms } = night.dark;
-    const steps = Number.isNaN(dusk_ms) ? 0 : Math.max(2, Math.ceil((dawn_ms - dusk_ms) / STEP_MS));
-    this.times = Float64Array.from(
-      { length: steps === 0 ? 0 : steps + 1 },
-      (_, i) => dusk_ms + (i * (dawn_ms - dusk_ms)) / steps,
-    );
-    this.zenith = Array.from(this.times, time => ephemeris.zenithRow(time));
-    this.moon = Array.from(this.times, time => ephemeris.moonDirection(time));
-    this.moonAltitude_deg = Array.from(this.times, time => ephemeris.moonAltitude_deg(time));
-    this.sunAltitude_deg = Array.from(this.times, time => ephemeris.sunAltitude_deg(time));
-    this.phaseAngle_deg = ephemeris.moonPhaseAngle_deg((night.noon_ms + night.nextNoon_ms) / 2);
+    this.grid = new TimeGrid(night.dark.dusk_ms, night.dark.dawn_ms, STEP_MS);
+    this.moments = Array.from(this.grid.times, time => this.momentAt(time));
+    this.moonAltitude_deg = this.moments.map(moment => moment.moonAltitude_deg);
     this.toApparent = ephemeris.aberrationAt((night.noon_ms + night.nextNoon_ms) / 2);
     this.limit_deg = Math.max(site.minAltitude_deg, altitudeOfAirmass_deg(site.maxAirmass));
+    this.sinLimit = Math.sin(this.limit_deg * RADIAN);
+    this.cosMoonLimit = Math.cos(site.moonDistance_deg * RADIAN);
   }
 
   /** How a star stands tonight, whatever is done with it. */
   follow(ra_deg: number, dec_deg: number, now_ms: number): StarTonight {
     const direction = this.toApparent(directionOf(ra_deg, dec_deg));
     const altitudeNow_deg = altitudeIn(this.zenithAt(now_ms), direction);
-    const altitudes = this.zenith.map(row => altitudeIn(row, direction) - this.limit_deg);
-    const clear = this.moon.map((moon, i) =>
-      this.moonAltitude_deg[i] > 0 ? separation_deg(moon, direction) - this.site.moonDistance_deg : 1,
-    );
+    const path: Path = {
+      sinAltitude: this.moments.map(({ zenith }) => dot(zenith, direction)),
+      cosMoonDistance: this.moments.map(({ moon }) => dot(moon, direction)),
+    };
+    const spans = this.grid.spans(time => this.isHigh(path, time) && !this.isMoonNear(path, time));
     return {
       now_ms,
       altitudeNow_deg,
       airmassNow: airmass(altitudeNow_deg),
-      spans: this.spans(altitudes, clear).filter(([, until]) => until > now_ms),
-      whyNever: () => this.whyNever(altitudes, clear, now_ms),
+      spans: spans.filter(([, until]) => until > now_ms),
+      whyNever: () => this.whyNever(path, now_ms),
     };
   }
 
@@ -117,7 +120,7 @@ export class NightSky {
     const moment = this.momentOf(time_ms);
     const direction = this.toApparent(directionOf(ra_deg, dec_deg));
     return {
-      phaseAngle_deg: this.phaseAngle_deg,
+      phaseAngle_deg: moment.phaseAngle_deg,
       sunAltitude_deg: moment.sunAltitude_deg,
       moonZenithDistance_deg: 90 - moment.moonAltitude_deg,
       separation_deg: separation_deg(moment.moon, direction),
@@ -127,27 +130,21 @@ export class NightSky {
 
   /** What is the same for all stars at one time: from the grid where it reaches, else worked out and kept. */
   private momentOf(time_ms: number): Moment {
-    const { times } = this;
-    if (time_ms >= times[0] && time_ms <= times[times.length - 1]) {
-      const i = Math.round((time_ms - times[0]) / (times[1] - times[0]));
-      return {
-        time_ms,
-        zenith: this.zenith[i],
-        moon: this.moon[i],
-        moonAltitude_deg: this.moonAltitude_deg[i],
-        sunAltitude_deg: this.sunAltitude_deg[i],
-      };
-    }
-    if (this.kept?.time_ms !== time_ms) {
-      this.kept = {
-        time_ms,
-        zenith: this.ephemeris.zenithRow(time_ms),
-        moon: this.ephemeris.moonDirection(time_ms),
-        moonAltitude_deg: this.ephemeris.moonAltitude_deg(time_ms),
-        sunAltitude_deg: this.ephemeris.sunAltitude_deg(time_ms),
-      };
-    }
+    if (this.grid.covers(time_ms)) return this.moments[this.grid.nearest(time_ms)];
+    if (this.kept?.time_ms !== time_ms) this.kept = this.momentAt(time_ms);
     return this.kept;
+  }
+
+  private momentAt(time_ms: number): Moment {
+    const { ephemeris } = this;
+    return {
+      time_ms,
+      zenith: ephemeris.zenithRow(time_ms),
+      moon: ephemeris.moonDirection(time_ms),
+      moonAltitude_deg: ephemeris.moonAltitude_deg(time_ms),
+      phaseAngle_deg: ephemeris.moonPhaseAngle_deg(time_ms),
+      sunAltitude_deg: ephemeris.sunAltitude_deg(time_ms),
+    };
   }
 
   /** Rotation to the zenith at one time, kept for the stars that are looked at together. */
@@ -158,61 +155,33 @@ export class NightSky {
     return this.zenithKept.row;
   }
 
-  /** Stretches of the night in which both values are positive. */
-  private spans(altitudes: readonly number[], clear: readonly number[]): [number, number][] {
-    const spans: [number, number][] = [];
-    let from = Number.NaN;
-    for (let i = 0; i < this.times.length; i++) {
-      const good = altitudes[i] >= 0 && clear[i] >= 0;
-      if (good && Number.isNaN(from)) from = i === 0 ? this.times[0] : this.edge(altitudes, clear, i);
-      if (!good && !Number.isNaN(from)) {
-        spans.push([from, this.edge(altitudes, clear, i)]);
-        from = Number.NaN;
-      }
-    }
-    if (!Number.isNaN(from)) spans.push([from, this.times[this.times.length - 1]]);
-    return spans;
+  private isHigh(path: Path, time_ms: number): boolean {
+    return this.grid.at(path.sinAltitude, time_ms) >= this.sinLimit;
   }
 
-  /** Time between grid points i-1 and i at which the smaller of the two values passes zero. */
-  private edge(altitudes: readonly number[], clear: readonly number[], i: number): number {
-    let low = this.times[i - 1];
-    let high = this.times[i];
-    const goodBefore = altitudes[i - 1] >= 0 && clear[i - 1] >= 0;
-    for (let step = 0; step < 20; step++) {
-      const middle = (low + high) / 2;
-      const good =
-        this.at(altitudes, i, middle) >= 0 &&
-        (clear[i - 1] >= 0 && clear[i] >= 0 ? true : this.at(clear, i, middle) >= 0);
-      if (good === goodBefore) low = middle;
-      else high = middle;
-    }
-    return (low + high) / 2;
+  private isMoonNear(path: Path, time_ms: number): boolean {
+    return (
+      this.grid.at(path.cosMoonDistance, time_ms) > this.cosMoonLimit &&
+      this.grid.at(this.moonAltitude_deg, time_ms) > 0
+    );
   }
 
-  /** Value at a time by the parabola through the grid points around i. */
-  private at(values: readonly number[], i: number, time: number): number {
-    const k = Math.min(this.times.length - 2, Math.max(1, i));
-    const step = this.times[1] - this.times[0];
-    const x = (time - this.times[k]) / step;
-    const [a, b, c] = [values[k - 1], values[k], values[k + 1]];
-    return b + ((c - a) / 2) * x + ((a - 2 * b + c) / 2) * x * x;
-  }
-
-  private whyNever(altitudes: readonly number[], clear: readonly number[], now_ms: number): string {
-    if (this.times.length === 0) return 'no dark time tonight: the Sun stays too high';
-    const end = this.times[this.times.length - 1];
-    if (now_ms >= end)
-      return `the night is over (Sun above ${this.site.sunLimit_deg} deg since ${clock(end)} UT)`;
-    const highest = Math.max(...altitudes) + this.limit_deg;
-    if (highest < this.limit_deg) {
-      return `never above ${this.limit_deg.toFixed(0)} deg in the dark (highest ${highest.toFixed(0)} deg)`;
+  private whyNever(path: Path, now_ms: number): string {
+    const { grid, site } = this;
+    const limit = this.limit_deg.toFixed(0);
+    if (grid.times.length === 0) return 'no dark time tonight: the Sun stays too high';
+    if (now_ms >= grid.until_ms) {
+      return `the night is over (Sun above ${site.sunLimit_deg} deg since ${clock(grid.until_ms)} UT)`;
     }
-    const up = altitudes.findLastIndex(altitude => altitude >= 0);
-    if (this.times[up] <= now_ms)
-      return `below ${this.limit_deg.toFixed(0)} deg since ${clock(this.times[up])} UT`;
-    const nearest = Math.min(...clear) + this.site.moonDistance_deg;
-    return `the Moon is too near (${nearest.toFixed(0)} deg, limit ${this.site.moonDistance_deg} deg)`;
+    const lastHigh = grid.spans(time => this.isHigh(path, time)).at(-1);
+    if (lastHigh === undefined) {
+      const highest_deg = Math.asin(Math.max(...path.sinAltitude)) / RADIAN;
+      return `never above ${limit} deg in the dark (highest ${Math.floor(highest_deg)} deg)`;
+    }
+    if (lastHigh[1] <= now_ms) return `below ${limit} deg since ${clock(lastHigh[1])} UT`;
+    const nearest = Math.max(...path.cosMoonDistance);
+    const distance_deg = Math.acos(Math.min(1, nearest)) / RADIAN;
+    return `the Moon is too near (${distance_deg.toFixed(0)} deg, limit ${site.moonDistance_deg} deg)`;
   }
 
   private whyTooShort(from: number, until: number, now: number, wall_s: number): string {
@@ -223,12 +192,15 @@ export class NightSky {
 
 const NEVER = { upFrom_ms: Number.NaN, upUntil_ms: Number.NaN, startBy_ms: Number.NaN } as const;
 
+function dot(a: Direction, b: Direction): number {
+  return a[0] * b[0] + a[1] * b[1] + a[2] * b[2];
+}
+
 function altitudeIn(zenith: Direction, direction: Direction): number {
-  const sine = zenith[0] * direction[0] + zenith[1] * direction[1] + zenith[2] * direction[2];
-  return Math.asin(Math.max(-1, Math.min(1, sine))) / RADIAN;
+  return Math.asin(Math.max(-1, Math.min(1, dot(zenith, direction)))) / RADIAN;
 }
 
 function separation_deg(a: Direction, b: Direction): number {
   const cross = Math.hypot(a[1] * b[2] - a[2] * b[1], a[2] * b[0] - a[0] * b[2], a[0] * b[1] - a[1] * b[0]);
-  return Math.atan2(cross, a[0] * b[0] + a[1] * b[1] + a[2] * b[2]) / RADIAN;
+  return Math.atan2(cross, dot(a, b)) / RADIAN;
 }

@@ -18,8 +18,12 @@ export function distancePosterior(
 ): DistancePosterior {
   const w = parallax_mas / 1000;
   const sigma = sigma_mas / 1000;
-  const nearest = w + 8 * sigma > 0 ? 1 / (w + 8 * sigma) : 1e-3 * lengthScale_pc;
-  const farthest = w > 8 * sigma ? Math.min(60 * lengthScale_pc, 1 / (w - 8 * sigma)) : 60 * lengthScale_pc;
+  const mode_pc = modeDistance_pc(w, sigma, lengthScale_pc);
+  // Eight sigma of the parallax either way, unless a short length scale outweighs it and pulls the star nearer.
+  const byParallax = w + 8 * sigma > 0 ? 1 / (w + 8 * sigma) : 1e-3 * lengthScale_pc;
+  const nearest = 1 / mode_pc - w > 6 * sigma ? Math.min(byParallax, mode_pc / 2) : byParallax;
+  const byScale = Math.max(60 * lengthScale_pc, 2 * mode_pc);
+  const farthest = w > 8 * sigma ? Math.min(byScale, 1 / (w - 8 * sigma)) : byScale;
   const logDensity = (logR: number) => {
     const r = Math.exp(logR);
     return 3 * logR - r / lengthScale_pc - (w - 1 / r) ** 2 / (2 * sigma * sigma);
@@ -34,7 +38,7 @@ export function distancePosterior(
     sums[i] = sums[i - 1] + (Math.exp(logs[i - 1] - largest) + Math.exp(logs[i] - largest)) / 2;
   }
   return {
-    mode_pc: modeDistance_pc(w, sigma, lengthScale_pc),
+    mode_pc,
     quantile_pc: share => {
       const target = share * sums[GRID_POINTS - 1];
       const i = Math.max(

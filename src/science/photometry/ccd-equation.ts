@@ -44,7 +44,15 @@ export function exposureTime_s(wanted: number, signal_ePerS: number, noise: Nois
   return (b + Math.sqrt(b * b + 4 * a * c)) / (2 * a);
 }
 
-/** Total time and number of exposures when none may last longer than `longest_s`. */
+/** How many exposures a total time takes when none may last longer than `longest_s`. */
+export function exposureCount(time_s: number, longest_s: number, leastCount: number): number {
+  return Math.max(leastCount, Math.ceil(time_s / longest_s - 1e-9));
+}
+
+/**
+ * Total time and number of exposures when none may last longer than `longest_s`. A rate or background that is not
+ * known gives a time that is not known (NaN); a star without signal an infinite one.
+ */
 export function splitExposure(
   wanted: number,
   signal_ePerS: number,
@@ -55,9 +63,9 @@ export function splitExposure(
   let count = leastCount;
   while (true) {
     const time_s = exposureTime_s(wanted, signal_ePerS, noise, count);
-    const needed = Math.max(leastCount, Math.ceil(time_s / longest_s - 1e-9));
+    const needed = exposureCount(time_s, longest_s, leastCount);
     // Each further read costs a little time, so the count only ever grows, in a few steps.
-    if (needed <= count) return { time_s, count };
+    if (!(needed > count && Number.isFinite(needed))) return { time_s, count };
     count = needed;
   }
 }

@@ -14,23 +14,6 @@ export function enclosedFraction(radius_fwhm: number, beta: number): number {
   return 1 - (1 + (radius_fwhm / coreWidth(beta)) ** 2) ** (1 - beta);
 }
 
-/**
- * Radius, in FWHM, with the best S/N against a uniform background: the maximum of enclosed / radius, by golden
- * section. 0.751 for beta 2.5.
- */
-export function bestRadius_fwhm(beta: number): number {
-  const golden = (Math.sqrt(5) - 1) / 2;
-  let low = 0.2;
-  let high = 3;
-  while (high - low > 1e-7) {
-    const a = high - golden * (high - low);
-    const b = low + golden * (high - low);
-    if (enclosedFraction(a, beta) / a > enclosedFraction(b, beta) / b) high = b;
-    else low = a;
-  }
-  return (low + high) / 2;
-}
-
 /** Share of the light in the brightest pixel, the star centred on it; pixel side in FWHM. */
 export function peakPixelFraction(pixel_fwhm: number, beta: number): number {
   const a = coreWidth(beta);

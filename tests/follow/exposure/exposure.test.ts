@@ -2,11 +2,19 @@ import { readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { imagerRates } from '../../../src/follow/exposure/imager.js';
 import { darkZenith } from '../../../src/follow/exposure/limits.js';
-import { planExposure, type Rates, tidyTime_s } from '../../../src/follow/exposure/plan-exposure.js';
+import {
+  planExposure,
+  type Rates,
+  tidyTime_s,
+  wallTime_s,
+} from '../../../src/follow/exposure/plan-exposure.js';
 import { ExposureAdviser } from '../../../src/follow/exposure/suggest.js';
+import type { ImagerSetup } from '../../../src/follow/settings.js';
 import { parseProfile } from '../../../src/night/profile/parse.js';
 import { BAND_COUNT } from '../../../src/science/bands.js';
+import { seeing_arcsec } from '../../../src/science/photometry/seeing.js';
 import { ROOT } from '../../support/built.js';
 
 const { profile } = parseProfile(
@@ -104,8 +112,76 @@ describe('exposures', () => {
     });
     expect(suggest(Number.NaN, imaging)).toMatchObject({
       possible: false,
-      limitedBy: 'brightness in the band not known',
+      limitedBy: 'not known: the brightness in this band',
     });
+  });
+
+  it('in daylight there is no sky brightness, and no exposure: words, and an end to the search', () => {
+    for (const setup of [imaging, spectrum]) {
+      expect(suggest(14, setup, { ...clear, sky_magPerArcsec2: () => Number.NaN })).toMatchObject({
+        possible: false,
+        limitedBy: 'daylight: the Sun is less than 5 deg below the horizon',
+      });
+    }
+  });
+
+  it('reach the S/N asked for, however saturation and the longest exposure round, or say that they cannot', () => {
+    const noise = { readNoise_e: 8, gain_ePerAdu: 1.5, scintillation_s: 2e-6 };
+    fc.assert(
+      fc.property(
+        fc.record({
+          wanted: fc.double({ min: 5, max: 500, noNaN: true }),
+          longest_s: fc.double({ min: 1, max: 300, noNaN: true }),
+          logSignal: fc.double({ min: -1, max: 5, noNaN: true }),
+          peakShare: fc.double({ min: 0.005, max: 0.3, noNaN: true }),
+          background: fc.double({ min: 0.01, max: 50, noNaN: true }),
+          pixels: fc.double({ min: 3, max: 300, noNaN: true }),
+        }),
+        ({ wanted, longest_s, logSignal, peakShare, background, pixels }) => {
+          const setup = { ...profile!.setups[imaging], targetSnr: wanted, maxSingle_s: longest_s };
+          const rates = {
+            signal_ePerS: 10 ** logSignal,
+            peak_ePerS: peakShare * 10 ** logSignal,
+            noise: { ...noise, pixels, background_ePerSPerPixel: background },
+          };
+          const planned = planExposure(setup, rates);
+          if (!planned.possible) {
+            expect(planned.limitedBy).toMatch(/^too (faint|bright): /);
+            return;
+          }
+          expect(planned.snr).toBeGreaterThanOrEqual(wanted * 0.999 - 1e-9);
+          expect(planned.snr).toBeCloseTo(snrAgain(rates, planned.each_s, planned.count), 6);
+          expect(planned.each_s).toBeLessThanOrEqual(longest_s * (1 + 1e-6));
+          expect(planned.each_s * (rates.peak_ePerS + background)).toBeLessThan(
+            profile!.setups[0].detector.fullWell_e,
+          );
+          expect(planned.total_s).toBeLessThanOrEqual(setup.maxTotal_s);
+        },
+      ),
+      { numRuns: 500, seed: 12 },
+    );
+  });
+
+  it('wall time is acquisition, exposures and readouts', () => {
+    const setup = { ...profile!.setups[imaging], acquire_s: 60 };
+    const readout_s = 2.5;
+    // Row 127 of checks_psf.csv: 60 + 15 x (20 + 2.5).
+    expect(wallTime_s({ ...setup, detector: { ...setup.detector, readout_s } }, 15, 20)).toBe(397.5);
+  });
+
+  it('a bright star gets a wider aperture: more of its light than the best against the sky alone', () => {
+    const setup = profile!.setups[imaging] as ImagerSetup;
+    const settings = profile!.bands.find(entry => entry.band === setup.band)!;
+    const passband = adviser.passbands.get(setup.band)!;
+    const pixels = (mag: number) =>
+      imagerRates(profile!.telescope, settings, passband, setup, clear, mag).noise.pixels;
+    expect(pixels(8)).toBeGreaterThan(2 * pixels(20));
+    // Against the sky alone the best radius of a Moffat image of beta 2.5 is 0.75061 FWHM (checks_psf.csv, row 44).
+    const fwhm = seeing_arcsec(clear.seeing_arcsec, clear.airmass, passband.wavelength_nm);
+    expect(Math.sqrt((pixels(26) * setup.detector.pixel_arcsec ** 2) / Math.PI) / fwhm).toBeCloseTo(
+      0.7506,
+      2,
+    );
   });
 
   it('the range of one sigma in brightness encloses the suggestion', () => {
