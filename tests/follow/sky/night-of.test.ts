@@ -55,26 +55,23 @@ describe('the night of a time', () => {
   });
 
   // Around the days on which the Sun begins to stay up or down, at which dusk or dawn alone happens.
-  it.each([60, 66, 68, 72, 78, 84, 89.5, -75, -89])(
-    'latitude %f: dark as long as the sampled Sun says',
-    latitude_deg => {
-      for (const sunLimit_deg of [-6, -12, -15]) {
-        const site = { ...SITE, latitude_deg, sunLimit_deg };
-        const ephemeris = new Ephemeris(site);
-        for (let day = 0; day < 366; day += 6) {
-          const night = nightOf(ephemeris, site, Date.UTC(2026, 0, 1, 18) + day * DAY_MS);
-          let below = 0;
-          for (let time = night.noon_ms; time < night.nextNoon_ms; time += SAMPLE_MS) {
-            if (ephemeris.sunAltitude_deg(time) < sunLimit_deg) below++;
-          }
-          const { dusk_ms, dawn_ms } = night.dark;
-          const dark = Number.isNaN(dusk_ms) ? 0 : (dawn_ms - dusk_ms) / SAMPLE_MS;
-          expect(Math.abs(dark - below), `day ${day}, limit ${sunLimit_deg}`).toBeLessThan(4);
-          expect(darkWords(night)).not.toMatch(/NaN|--/);
+  it.each([60, 68, 78, 89.5, -89])('latitude %f: dark as long as the sampled Sun says', latitude_deg => {
+    for (const sunLimit_deg of [-6, -12, -15]) {
+      const site = { ...SITE, latitude_deg, sunLimit_deg };
+      const ephemeris = new Ephemeris(site);
+      for (let day = 0; day < 366; day += 6) {
+        const night = nightOf(ephemeris, site, Date.UTC(2026, 0, 1, 18) + day * DAY_MS);
+        let below = 0;
+        for (let time = night.noon_ms; time < night.nextNoon_ms; time += SAMPLE_MS) {
+          if (ephemeris.sunAltitude_deg(time) < sunLimit_deg) below++;
         }
+        const { dusk_ms, dawn_ms } = night.dark;
+        const dark = Number.isNaN(dusk_ms) ? 0 : (dawn_ms - dusk_ms) / SAMPLE_MS;
+        expect(Math.abs(dark - below), `day ${day}, limit ${sunLimit_deg}`).toBeLessThan(4);
+        expect(darkWords(night)).not.toMatch(/NaN|--/);
       }
-    },
-  );
+    }
+  });
 
   it('the first day of a polar night is dark from dusk on, not light', () => {
     const site = { ...SITE, latitude_deg: 75, longitude_deg: 15, sunLimit_deg: -0.8333 };

@@ -52,6 +52,49 @@ describe('windows', () => {
     );
   });
 
+  it('begin and end within 20 s of where a slow search puts them, Moonrise and Moonset included', () => {
+    const limits = { ...SITE, moonDistance_deg: 60 };
+    // The last quarter: the Moon rises in the middle of the night.
+    const night = nightOf(ephemeris, SITE, Date.UTC(2026, 11, 1, 21));
+    const { dusk_ms, dawn_ms } = night.dark;
+    const strict = new NightSky(ephemeris, limits, night);
+    const moon = ephemeris.moonDirection(dusk_ms);
+    const moonRa = ((Math.atan2(moon[1], moon[0]) * 180) / Math.PI + 360) % 360;
+    const slow_ms = 10_000;
+    let edges = 0;
+    let moonEdges = 0;
+    for (let i = 0; i < 9; i++) {
+      const [ra, dec] = [(moonRa + 295 + (i % 6) * 10) % 360, -3 + i * 8];
+      const direction = ephemeris.aberrationAt(dusk_ms)(directionOf(ra, dec));
+      const moonAway = (time: number) => {
+        const [x, y, z] = ephemeris.moonDirection(time);
+        const cosine = x * direction[0] + y * direction[1] + z * direction[2];
+        return (Math.acos(cosine) * 180) / Math.PI >= 60 || ephemeris.moonAltitude_deg(time) <= 0;
+      };
+      const high = (time: number) => ephemeris.starPlace(directionOf(ra, dec), time).altitude_deg >= 30;
+      const slow: number[] = [];
+      let before = false;
+      for (let time = dusk_ms; time < dawn_ms; time += slow_ms) {
+        const away = moonAway(time);
+        const good = high(time) && away;
+        if (good !== before && time > dusk_ms) {
+          slow.push(time - slow_ms / 2);
+          if (away !== moonAway(time - slow_ms)) moonEdges++;
+        }
+        before = good;
+      }
+      const found = strict
+        .follow(ra, dec, dusk_ms)
+        .spans.flat()
+        .filter(time => time > dusk_ms && time < dawn_ms);
+      expect(found.length, `star ${i}`).toBe(slow.length);
+      for (const [k, time] of found.entries()) expect(Math.abs(time - slow[k])).toBeLessThan(20_000);
+      edges += found.length;
+    }
+    expect(edges).toBeGreaterThan(8);
+    expect(moonEdges).toBeGreaterThan(2);
+  });
+
   it('the latest start still completes, and not a minute later', () => {
     fc.assert(
       fc.property(star, ({ ra, dec, wall_s }) => {
