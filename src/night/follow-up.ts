@@ -4,6 +4,7 @@ import { skyBrightness_magPerArcsec2 } from '../follow/sky/sky-light.js';
 import type { StarTonight, TargetWindow } from '../follow/sky/window.js';
 import type { Band } from '../science/bands.js';
 import { PosteriorReader } from '../science/odds/index.js';
+import { airmass } from '../science/sky/airmass.js';
 import { MeasuredConditions } from './measured-conditions.js';
 import type { NightState } from './night-state.js';
 import { SkyNow } from './sky-now.js';
@@ -56,10 +57,12 @@ export class FollowUpDesk {
     const isUp = next !== undefined && next[0] <= now_ms;
     const when_ms = next === undefined || isUp ? now_ms : next[0];
     const geometry = this.sky.at(now_ms).geometryAt(positions.ra_deg[star], positions.dec_deg[star], when_ms);
+    const airmassLater =
+      next === undefined ? profile.site.maxAirmass : airmass(90 - geometry.targetZenithDistance_deg);
     const bandV = profile.bands.find(entry => entry.band === 'V');
     const { measured } = this.current();
     return {
-      airmass: isUp ? tonight.airmassNow : profile.site.maxAirmass,
+      airmass: isUp ? tonight.airmassNow : airmassLater,
       seeing_arcsec: measured.seeing_arcsec(),
       siteHeight_m: profile.site.height_m,
       cloud_mag: measured.cloud_mag(),

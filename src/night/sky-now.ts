@@ -7,6 +7,8 @@ import { NightSky } from '../follow/sky/window.js';
 export class SkyNow {
   readonly ephemeris: Ephemeris;
   private sky: NightSky | undefined;
+  /** Since when the kept sky is the one that counts. */
+  private from_ms = Number.NaN;
 
   constructor(private readonly profile: Profile) {
     this.ephemeris = new Ephemeris(profile.site);
@@ -14,13 +16,11 @@ export class SkyNow {
 
   at(now_ms: number): NightSky {
     const known = this.sky;
-    if (known !== undefined && now_ms >= known.night.noon_ms && now_ms < known.night.nextNoon_ms)
-      return known;
-    this.sky = new NightSky(
-      this.ephemeris,
-      this.profile.site,
-      nightOf(this.ephemeris, this.profile.site, now_ms),
-    );
+    if (known !== undefined && now_ms >= this.from_ms && now_ms < known.night.nextNoon_ms) return known;
+    const night = nightOf(this.ephemeris, this.profile.site, now_ms);
+    this.sky = new NightSky(this.ephemeris, this.profile.site, night);
+    // In the morning it is the coming night that counts, though its noon is still ahead.
+    this.from_ms = Math.min(now_ms, night.noon_ms);
     return this.sky;
   }
 }
