@@ -1,7 +1,7 @@
-import { basename } from 'node:path';
+import { basename, resolve } from 'node:path';
 import { formatProblem, makeProblem, type Problem } from '../catalogue/problems.js';
 import { safeText } from '../catalogue/safe-text.js';
-import { NightEngine } from '../night/engine.js';
+import { NightEngine, type NightFile } from '../night/engine.js';
 import { FollowUpDesk } from '../night/follow-up.js';
 import { isRefusal, readWhole } from '../night/watcher/safe-file.js';
 import { EXIT, UsageError } from './exit-codes.js';
@@ -29,20 +29,24 @@ export async function classifyCommand(
   io: CommandIo,
 ): Promise<number> {
   const engine = new NightEngine(profileFor(options.profile, io));
-  const read: { name: string; bytes: Uint8Array }[] = [];
   const problems: Problem[] = [];
-  for (const path of files) {
-    const bytes = await readWhole(path);
-    if (bytes === undefined) throw new UsageError(`${path}: no such file`);
-    const name = basename(path);
-    if (isRefusal(bytes)) problems.push(makeProblem(bytes.code, safeText(name), 0, bytes.seen));
-    else read.push({ name, bytes });
-  }
-  for (const { problems: found } of await engine.absorbAll(read)) problems.push(...found);
+  const outcomes = await engine.absorbAll(readFiles(files, problems));
+  problems.push(...outcomes.flatMap(outcome => outcome.problems));
   for (const problem of problems) io.err(`${formatProblem(problem)}\n`);
   if (options.explain === undefined) await printStars(engine, options, io);
   else await io.out(`${explain(engine, starNamed(engine, options.explain)).join('\n')}\n`);
   return problems.some(problem => problem.cost === 'file') ? EXIT.someUnreadable : EXIT.ok;
+}
+
+/** One file after another, so that only one is held at a time. Those that cannot be opened become problems. */
+async function* readFiles(paths: readonly string[], problems: Problem[]): AsyncGenerator<NightFile> {
+  for (const path of paths) {
+    const bytes = await readWhole(path);
+    if (bytes === undefined) throw new UsageError(`${path}: no such file`);
+    const name = basename(path);
+    if (isRefusal(bytes)) problems.push(makeProblem(bytes.code, safeText(name), 0, bytes.seen));
+    else yield { name, bytes, place: resolve(path) };
+  }
 }
 
 function starNamed(engine: NightEngine, id: string): number {

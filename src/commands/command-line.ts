@@ -23,12 +23,21 @@ export async function runCommand(
       io.err(`nightsieve: ${error.message}\n`);
       return EXIT.usage;
     }
+    if (isOfTheSystem(error)) {
+      io.err(`nightsieve: the system refused: ${error.message}\n`);
+      return EXIT.failed;
+    }
     io.err(
       `nightsieve: this is a fault of the program: ${error instanceof Error ? error.stack : String(error)}\n`,
     );
     return EXIT.failed;
   }
   return code;
+}
+
+/** A full disk, a missing permission: told by the system's own words, which name the file. No fault of the program. */
+function isOfTheSystem(error: unknown): error is NodeJS.ErrnoException {
+  return error instanceof Error && 'syscall' in error;
 }
 
 /** The command line: one place for parsing, help and usage errors. */
@@ -116,14 +125,17 @@ function glyphsOption(): Option {
 
 function positiveNumber(text: string): number {
   const value = Number(text);
-  if (!(value > 0)) throw new InvalidArgumentError('a number above 0 is needed');
+  if (!(value > 0 && Number.isFinite(value))) throw new InvalidArgumentError('a number above 0 is needed');
   return value;
 }
 
+/** Dates and times as ISO 8601 writes them; without an offset they are UTC. */
 function utcTime(text: string): number {
-  const time = Date.parse(/Z$|[+-]\d\d:?\d\d$/.test(text) ? text : `${text}Z`);
-  if (Number.isNaN(time)) throw new InvalidArgumentError('a time such as 2026-11-08T22:00Z is needed');
-  return time;
+  const parts = /^(\d{4}-\d\d-\d\d)(?:[T ](\d\d:\d\d(?::\d\d(?:\.\d+)?)?)(Z|[+-]\d\d:\d\d)?)?$/.exec(text);
+  const [, date, time = '00:00', offset = 'Z'] = parts ?? [];
+  const time_ms = Date.parse(`${date}T${time}${offset}`);
+  if (Number.isNaN(time_ms)) throw new InvalidArgumentError('a time such as 2026-11-08T22:00Z is needed');
+  return time_ms;
 }
 
 /** profiles/ beside the program: next to dist/ in an installation, next to src/ when run from sources. */

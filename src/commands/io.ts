@@ -13,17 +13,31 @@ export interface CommandIo {
 export function standardIo(profilesFolder: string): CommandIo {
   process.stdout.on('error', (error: NodeJS.ErrnoException) => {
     if (error.code === 'EPIPE') process.exit(0);
-    throw error;
   });
   return {
     out: text =>
-      new Promise<void>(resolve => {
-        process.stdout.write(text, () => resolve());
+      new Promise<void>((resolve, reject) => {
+        process.stdout.write(text, error => {
+          // The closed pipe has its own way out, above.
+          if (error && (error as NodeJS.ErrnoException).code !== 'EPIPE') reject(error);
+          else resolve();
+        });
       }),
-    err: text => {
-      writeSync(2, text);
-    },
+    err: writeError,
     now_ms: Date.now,
     profilesFolder,
   };
+}
+
+/** Waits for a slow reader; with none left the message has no one to go to, and the work goes on. */
+function writeError(text: string): void {
+  const bytes = Buffer.from(text);
+  for (let written = 0; written < bytes.length; ) {
+    try {
+      written += writeSync(2, bytes, written);
+    } catch (error) {
+      if ((error as NodeJS.ErrnoException).code !== 'EAGAIN') return;
+      Atomics.wait(new Int32Array(new SharedArrayBuffer(4)), 0, 0, 5);
+    }
+  }
 }

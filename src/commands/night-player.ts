@@ -1,7 +1,7 @@
 import { appendFileSync, readFileSync, renameSync, writeFileSync } from 'node:fs';
 import { basename, join } from 'node:path';
 import type { ClockSetting } from '../night/clock.js';
-import type { Timetable } from './timetable.js';
+import { namesIn, type Timetable } from './timetable.js';
 
 interface Step {
   readonly at_ms: number;
@@ -21,11 +21,11 @@ export class NightPlayer {
     timetable: Timetable,
     private readonly clock: ClockSetting,
   ) {
-    this.files = timetable.files.length;
+    this.files = namesIn(timetable).size;
     this.steps = timetable.files.flatMap(entry => this.stepsOf(entry)).sort((a, b) => a.at_ms - b.at_ms);
   }
 
-  /** Files of the whole night. */
+  /** Files that the folder holds at the end of the night. */
   readonly files: number;
 
   get finished(): boolean {

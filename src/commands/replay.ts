@@ -1,11 +1,9 @@
-import { mkdtempSync, rmSync } from 'node:fs';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
 import type { CommandIo } from './io.js';
 import { profileFor } from './load-profile.js';
 import { NightPlayer } from './night-player.js';
 import type { NightOptions } from './night-source.js';
 import { runNight } from './run-night.js';
+import { makeTemporaryFolder } from './temporary-folder.js';
 import { readTimetable } from './timetable.js';
 
 /** A whole night takes about this long unless told otherwise. */
@@ -20,17 +18,14 @@ export async function replayCommand(
   const timetable = readTimetable(folder);
   const profile = profileFor(options.profile ?? timetable.profile, io);
   const speed = options.speed ?? (timetable.ends - timetable.begins) / 1000 / USUAL_LENGTH_S;
-  const target = mkdtempSync(join(tmpdir(), 'nightsieve-replay-'));
-  const remove = () => rmSync(target, { recursive: true, force: true });
-  process.on('exit', remove);
+  const target = makeTemporaryFolder('nightsieve-replay-');
   const clock = { begins_ms: timetable.begins, ends_ms: timetable.ends, startedAt_ms: Date.now(), speed };
-  const player = new NightPlayer(folder, target, timetable, clock);
+  const player = new NightPlayer(folder, target.path, timetable, clock);
   try {
     player.start();
-    return await runNight({ folder: target, profile, poll: false, clock }, options, io, player);
+    return await runNight({ folder: target.path, profile, poll: false, clock }, options, io, player);
   } finally {
     player.stop();
-    remove();
-    process.off('exit', remove);
+    target.remove();
   }
 }

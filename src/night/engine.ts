@@ -18,12 +18,22 @@ import { EvidenceMaker } from './evidence.js';
 import { FlagBook } from './flag-book.js';
 import { FrameLog } from './frame-log.js';
 import type { NightState } from './night-state.js';
+import { ProblemBook } from './problem-book.js';
 import type { FrameSummary } from './view.js';
 
-/** What happened to one file. */
+/** One file as it comes. */
+export interface NightFile {
+  /** Its name without folders. */
+  readonly name: string;
+  readonly bytes: Uint8Array;
+  /** Tells it from files of the same name in other folders. */
+  readonly place: string;
+}
+
+/** What happened to one file: `known` has the content of another, `unchanged` the content it had before. */
 export interface FileOutcome {
   readonly name: string;
-  readonly kind: 'read' | 'replaced' | 'known' | 'refused';
+  readonly kind: 'read' | 'replaced' | 'known' | 'unchanged' | 'refused';
   /** Index of the frame; -1 where there is none. */
   readonly frame: number;
   readonly problems: readonly Problem[];
@@ -40,8 +50,8 @@ export class NightEngine implements NightState {
   inputs: StarInputs;
   positions: NightState['positions'];
   odds: OddsColumns = makeOddsColumns(1024);
-  readonly problems: Problem[] = [];
   duplicates = 0;
+  private readonly book = new ProblemBook();
   private readonly summaries = new Map<number, FrameSummary>();
   private readonly log = new FrameLog();
   private readonly changes = new ChangeSearch();
@@ -65,23 +75,25 @@ export class NightEngine implements NightState {
     );
   }
 
-  /** Reads one file and lets everything that depends on it follow. */
+  get problems(): readonly Problem[] {
+    return this.book.all();
+  }
+
+  /** Reads one file of the night's folder and lets everything that depends on it follow. */
   absorb(name: string, bytes: Uint8Array): FileOutcome {
-    const taken = this.take(name, bytes);
+    const taken = this.take({ name, bytes, place: name });
     if (taken.frame >= 0) this.follow(taken.frame, taken.stars);
     return taken;
   }
 
-  /** Reads many files and follows once at the end, on two threads: for a night that is already over. */
-  async absorbAll(
-    files: Iterable<{ readonly name: string; readonly bytes: Uint8Array }>,
-  ): Promise<readonly FileOutcome[]> {
+  /** Reads many files, one at a time, and follows once at the end, on two threads: for a night that is already over. */
+  async absorbAll(files: AsyncIterable<NightFile>): Promise<readonly FileOutcome[]> {
     const outcomes: FileOutcome[] = [];
     let last = -1;
-    for (const { name, bytes } of files) {
-      const taken = this.take(name, bytes);
-      if (taken.frame >= 0) last = taken.frame;
-      outcomes.push(taken);
+    for await (const file of files) {
+      const { stars: _, ...outcome } = this.take(file);
+      if (outcome.frame >= 0) last = outcome.frame;
+      outcomes.push(outcome);
     }
     if (last < 0) return outcomes;
     this.readStars();
@@ -90,15 +102,22 @@ export class NightEngine implements NightState {
     return outcomes;
   }
 
-  private take(name: string, bytes: Uint8Array): FileOutcome & { readonly stars: Uint32Array } {
+  /** A file of the night's folder that could not even be opened. */
+  refuse(name: string, problem: Problem): void {
+    this.book.set(name, [problem]);
+  }
+
+  private take({ name, bytes, place }: NightFile): FileOutcome & { readonly stars: Uint32Array } {
     const { frame, problems } = readFrame(name, bytes, this.profile.input);
-    this.problems.push(...problems);
-    if (frame === undefined) return { name, kind: 'refused', frame: -1, problems, stars: NO_STARS };
-    const fate = this.log.decide(name, bytes);
-    if (fate.kind === 'known') {
-      this.duplicates++;
-      return { name, kind: 'known', frame: -1, problems, stars: NO_STARS };
+    if (frame === undefined) {
+      // An earlier frame under this name stays: it was good.
+      this.book.set(place, problems);
+      return { name, kind: 'refused', frame: -1, problems, stars: NO_STARS };
     }
+    const fate = this.log.decide(place, bytes);
+    if (fate.kind === 'known') return { name, kind: 'known', ...this.repeated(place, fate.freed) };
+    this.book.set(place, problems);
+    if (fate.kind === 'unchanged') return { name, kind: 'unchanged', frame: -1, problems, stars: NO_STARS };
     const stars = this.catalogue.absorb(frame, fate.index);
     const { facts } = frame;
     this.summaries.set(fate.index, {
@@ -121,6 +140,16 @@ export class NightEngine implements NightState {
       // A replaced frame may have lost stars: all of them are looked at again.
       stars: replaced ? everyStar(this.catalogue.count) : stars,
     };
+  }
+
+  /** Content of another file, which has told its problems; the frame that this file had before is gone. */
+  private repeated(place: string, freed: number | undefined) {
+    this.duplicates++;
+    this.book.set(place, []);
+    if (freed === undefined) return { frame: -1, problems: [], stars: NO_STARS };
+    this.catalogue.forget(freed);
+    this.summaries.delete(freed);
+    return { frame: freed, problems: [], stars: everyStar(this.catalogue.count) };
   }
 
   /** Classifies and judges the stars that a frame touched. */

@@ -5,24 +5,49 @@ export type Fate =
   | { readonly kind: 'new'; readonly index: number }
   /** The same file again with other content: it takes its earlier place. */
   | { readonly kind: 'replacement'; readonly index: number }
-  /** Content that was already read, under this or another name. */
-  | { readonly kind: 'known'; readonly as: string };
+  /** Content that another file holds already. `freed`: the frame of what this file held before, held by none now. */
+  | { readonly kind: 'known'; readonly freed: number | undefined }
+  /** The same file with the content it had. */
+  | { readonly kind: 'unchanged' };
 
-/** Knows which file is which: each content counts once, and a re-reduction replaces its earlier frame. */
+interface Content {
+  readonly index: number;
+  readonly places: Set<string>;
+}
+
+/**
+ * Knows which file is which: each content counts once, and a re-reduction replaces its earlier frame. A content stays
+ * as long as any file holds it, so that a `latest.csv` beside numbered copies does not take the earlier frames along.
+ */
 export class FrameLog {
-  private readonly byName = new Map<string, { readonly index: number; readonly hash: string }>();
-  private readonly byHash = new Map<string, string>();
+  private readonly hashes = new Map<string, string>();
+  private readonly contents = new Map<string, Content>();
   private next = 0;
 
-  decide(name: string, bytes: Uint8Array): Fate {
+  /** `place` tells files apart: a name within one folder, else a path. */
+  decide(place: string, bytes: Uint8Array): Fate {
     const hash = createHash('sha256').update(bytes).digest('hex');
-    const holder = this.byHash.get(hash);
-    if (holder !== undefined) return { kind: 'known', as: holder };
-    const earlier = this.byName.get(name);
-    if (earlier !== undefined) this.byHash.delete(earlier.hash);
-    const index = earlier?.index ?? this.next++;
-    this.byName.set(name, { index, hash });
-    this.byHash.set(hash, name);
-    return { kind: earlier === undefined ? 'new' : 'replacement', index };
+    const before = this.hashes.get(place);
+    if (before === hash) return { kind: 'unchanged' };
+    this.hashes.set(place, hash);
+    const freed = this.leave(place, before);
+    const known = this.contents.get(hash);
+    if (known !== undefined) {
+      known.places.add(place);
+      return { kind: 'known', freed };
+    }
+    const index = freed ?? this.next++;
+    this.contents.set(hash, { index, places: new Set([place]) });
+    return { kind: freed === undefined ? 'new' : 'replacement', index };
+  }
+
+  /** Takes a file off the content it held; returns that content's frame if no other file holds it. */
+  private leave(place: string, hash: string | undefined): number | undefined {
+    const content = hash === undefined ? undefined : this.contents.get(hash);
+    if (hash === undefined || content === undefined) return undefined;
+    content.places.delete(place);
+    if (content.places.size > 0) return undefined;
+    this.contents.delete(hash);
+    return content.index;
   }
 }

@@ -4,7 +4,8 @@ import type { FromWorker, ToWorker, WorkerStart } from './messages.js';
 /** The night's worker as the main thread sees it. */
 export class WorkerClient {
   private readonly worker: Worker;
-  private stopping = false;
+  /** Stopped, or failed: nothing more is to be said of its end. */
+  private ended = false;
 
   constructor(
     start: WorkerStart,
@@ -13,10 +14,13 @@ export class WorkerClient {
   ) {
     this.worker = new Worker(new URL('./worker.js', import.meta.url), { workerData: start });
     this.worker.on('message', onMessage);
-    this.worker.on('error', onFailure);
-    this.worker.on('exit', code => {
-      if (!this.stopping) onFailure(new Error(`the reading thread ended by itself (code ${code})`));
-    });
+    // A failure is followed by an exit, which would hide its words.
+    const fail = (error: unknown) => {
+      if (!this.ended) onFailure(error);
+      this.ended = true;
+    };
+    this.worker.on('error', fail);
+    this.worker.on('exit', code => fail(new Error(`the reading thread ended by itself (code ${code})`)));
   }
 
   post(message: ToWorker): void {
@@ -24,7 +28,7 @@ export class WorkerClient {
   }
 
   async stop(): Promise<void> {
-    this.stopping = true;
+    this.ended = true;
     await this.worker.terminate();
   }
 }

@@ -42,7 +42,7 @@ function run(start: WorkerStart, port: NonNullable<typeof parentPort>): void {
       await new Promise(resolve => setImmediate(resolve));
     },
     onRefused: (name, { code, seen }) => {
-      engine.problems.push(makeProblem(code, safeText(name), 0, seen));
+      engine.refuse(name, makeProblem(code, safeText(name), 0, seen));
       files.add(name);
       viewSoon();
     },

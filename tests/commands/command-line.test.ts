@@ -1,9 +1,10 @@
-import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { spawnSync } from 'node:child_process';
+import { mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join, resolve } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { CLASSES } from '../../src/science/classes.js';
-import { ROOT, run } from '../support/built.js';
+import { MAIN, ROOT, run } from '../support/built.js';
 
 let folder: string;
 const file = (name: string, content: string | Uint8Array) => {
@@ -41,7 +42,10 @@ describe('the command line', () => {
     [['classify'], /missing required argument 'files'/],
     [['classify', 'x.csv', '--format', 'xml'], /Allowed choices are table, jsonl, csv/],
     [['classify', 'x.csv', '--at', 'soon'], /a time such as 2026-11-08T22:00Z/],
+    [['classify', 'x.csv', '--at', 'monday 3'], /a time such as 2026-11-08T22:00Z/],
+    [['classify', 'x.csv', '--at', '2026-13-08'], /a time such as 2026-11-08T22:00Z/],
     [['replay', 'demo-run', '--speed', '-3'], /a number above 0/],
+    [['replay', 'demo-run', '--speed', 'Infinity'], /a number above 0/],
     [
       ['classify', 'x.csv'],
       /a profile is needed: --profile NAME with one of demo, northern-80cm, southern-2m/,
@@ -166,10 +170,65 @@ describe('classify', () => {
     expect([missing.code, missing.err]).toEqual([2, "nightsieve: no star called 'nobody' in these files\n"]);
   });
 
+  it('files of one name in two folders are two files', async () => {
+    for (const name of ['one', 'two']) mkdirSync(join(folder, name));
+    const [head, sun, dwarf] = TABLE.split('\n');
+    const one = file('one/t.csv', `${head}\n${sun}\n`);
+    const two = file('two/t.csv', `${head}\n${dwarf}\n`);
+    const { out } = await classify(one, two, '--format', 'csv');
+    expect(
+      out
+        .trim()
+        .split('\n')
+        .map(line => line.split(',')[0]),
+    ).toEqual(['id', 'sun', 'dwarf']);
+  });
+
+  it.each(['2026-11-08T22:00Z', '2026-11-08T22:00', '2026-11-08 22:00:00', '2026-11-09T00:00+02:00'])(
+    '--at %s is the same time',
+    async at => {
+      const path = file('t.csv', TABLE);
+      const args = ['classify', path, '--profile', 'northern-80cm', '--format', 'jsonl', '--flagged', '--at'];
+      expect((await run([...args, at])).out).toBe((await run([...args, '2026-11-08T22:00:00Z'])).out);
+    },
+  );
+
   it('a bad row costs itself', async () => {
     const { code, out, err } = await classify(file('row.csv', `${TABLE}half,a\n`), '--format', 'jsonl');
     expect(code).toBe(0);
     expect(err).toMatch(/^row\.csv:5: row-width/);
     expect(out.trim().split('\n')).toHaveLength(3);
+  });
+});
+
+describe('what the program cannot help', () => {
+  const shell = (command: string) =>
+    spawnSync('bash', ['-c', command], {
+      encoding: 'utf8',
+      env: { ...process.env, NIGHT: `node ${MAIN}`, FOLDER: folder },
+    });
+
+  it.skipIf(process.platform !== 'linux')('a full disk is told without a stack', () => {
+    file('t.csv', TABLE);
+    const { status, stderr } = shell('$NIGHT classify $FOLDER/t.csv --profile demo > /dev/full');
+    expect(status).toBe(1);
+    expect(stderr).toMatch(/^nightsieve: the system refused: ENOSPC.*\n$/);
+  });
+
+  it('a reader that goes away ends it quietly', () => {
+    const rows = Array.from({ length: 3000 }, (_, i) => `${i},${30 + i / 1000},45,15,0.01,15.6,0.01,2,0.1`);
+    file('long.csv', `${TABLE.split('\n')[0]}\n${rows.join('\n')}\n`);
+    const { stdout, stderr } = shell(
+      '$NIGHT classify $FOLDER/long.csv --profile demo --format jsonl | head -1 | cut -c1-8; echo $PIPESTATUS',
+    );
+    expect([stdout, stderr]).toEqual(['{"id":"0\n0\n', '']);
+  });
+
+  it('with no one to read the problems the work is done all the same', () => {
+    file('bad', 'zork');
+    const { stdout } = shell(
+      '$NIGHT classify $FOLDER/bad --profile demo 2>&1 >/dev/null | true; echo $PIPESTATUS',
+    );
+    expect(stdout).toBe('3\n');
   });
 });

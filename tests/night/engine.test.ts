@@ -73,8 +73,9 @@ describe('a night of three stars', () => {
       ['copy.csv', frame('V', V)],
       ['v.csv', frame('V', V)],
     );
-    expect(outcomes.map(({ kind }) => kind)).toEqual(['read', 'known', 'known']);
-    expect(view.duplicates).toBe(2);
+    // The third is the first file again, merely touched: no duplicate.
+    expect(outcomes.map(({ kind }) => kind)).toEqual(['read', 'known', 'unchanged']);
+    expect(view.duplicates).toBe(1);
     expect(view.stars.readings[0]).toBe(1);
   });
 
@@ -84,6 +85,61 @@ describe('a night of three stars', () => {
     const { stars } = maker.view(NOW);
     expect(stars.mag[0]).toBeCloseTo(10.0, 3);
     expect(stars.readings[0]).toBe(2);
+  });
+
+  it('a latest.csv beside numbered copies keeps all frames', () => {
+    const [one, two] = [frame('V', V), frame('V', V, 0.1, '10')];
+    const { outcomes, view } = night(
+      ['latest.csv', one],
+      ['v1.csv', one],
+      ['latest.csv', two],
+      ['v2.csv', two],
+    );
+    expect(outcomes.map(({ kind }) => kind)).toEqual(['read', 'known', 'read', 'known']);
+    expect(view.frames).toHaveLength(2);
+    expect(view.stars.mag[0]).toBeCloseTo(9.85, 3);
+  });
+
+  it('a file that becomes a copy of another takes its own frame away', () => {
+    const [one, two] = [frame('V', V), frame('V', V, 0.1, '10')];
+    const { outcomes, view } = night(['v1.csv', one], ['v2.csv', two], ['v2.csv', one]);
+    expect(outcomes.at(-1)?.kind).toBe('known');
+    expect(view.frames.map(({ name }) => name)).toEqual(['v1.csv']);
+    expect(view.stars.mag[0]).toBeCloseTo(9.8, 3);
+  });
+
+  it('a file written anew takes its old problems away, a copy does not repeat them', () => {
+    const half = `${frame('V', V)}30.3,45`;
+    const { engine } = night(['v.csv', half], ['copy.csv', half]);
+    expect(engine.problems.map(({ code, file }) => [code, file])).toEqual([['row-width', 'v.csv']]);
+    engine.absorb('v.csv', bytes(frame('V', V, 0, '01')));
+    expect(engine.problems).toEqual([]);
+  });
+
+  it('a rewrite that cannot be read leaves the good frame, until it can', () => {
+    const { engine } = night(['v.csv', frame('V', V)], ['v.csv', 'rubbish']);
+    expect(engine.frames).toHaveLength(1);
+    expect(engine.problems).toHaveLength(1);
+    engine.absorb('v.csv', bytes(frame('V', V)));
+    expect(engine.problems).toEqual([]);
+  });
+
+  it('a night read at once gives what it gives file by file; files of one name in two folders are two', async () => {
+    const files = [
+      { name: 'a.csv', place: '/a/a.csv', bytes: bytes(ASTROMETRY) },
+      { name: 'v.csv', place: '/a/v.csv', bytes: bytes(frame('V', V, 0, '05')) },
+      { name: 'v.csv', place: '/b/v.csv', bytes: bytes(frame('B', B)) },
+    ];
+    const engine = new NightEngine(profile!);
+    const outcomes = await engine.absorbAll(
+      (async function* () {
+        yield* files;
+      })(),
+    );
+    expect(outcomes.map(({ kind }) => kind)).toEqual(['read', 'read', 'read']);
+    const all = new ViewMaker(engine, new FollowUpDesk(engine)).view(NOW);
+    expect(all.stars.absMag).toEqual(whole().view.stars.absMag);
+    expect(all.shortlist.map(({ id }) => id)).toEqual(['dwarf']);
   });
 
   it('a refused file costs nothing else', () => {

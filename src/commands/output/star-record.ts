@@ -13,7 +13,7 @@ export interface StarRecord {
   readonly ra_deg: number | null;
   readonly dec_deg: number | null;
   readonly mags: Readonly<
-    Record<string, { readonly value: number; readonly sigma: number; readonly n: number }>
+    Record<string, { readonly value: number; readonly sigma: number | null; readonly n: number }>
   >;
   readonly abs_mag: { readonly band: string; readonly value: number | null; readonly sigma: number | null };
   readonly colour: { readonly name: string; readonly value: number | null; readonly sigma: number | null };
@@ -103,11 +103,11 @@ export class RecordMaker {
 
   private magnitudes(star: number): StarRecord['mags'] {
     const { bands, mag, sigma_mag } = this.night.inputs;
-    const named: Record<string, { value: number; sigma: number; n: number }> = {};
+    const named: Record<string, { value: number; sigma: number | null; n: number }> = {};
     bands.forEach((band, b) => {
       const value = rounded(mag[b][star], 4);
       if (value !== null)
-        named[band] = { value, sigma: rounded(sigma_mag[b][star], 4) ?? 0, n: this.counts[b][star] };
+        named[band] = { value, sigma: rounded(sigma_mag[b][star], 4), n: this.counts[b][star] };
     });
     return named;
   }

@@ -6,6 +6,14 @@ export interface Glance {
   readonly lastByte: number | undefined;
 }
 
+/** How long a file has been left alone, by two clocks: on network disks the file's time is another machine's. */
+export interface Stillness {
+  /** Since the time written in the file system; negative when that clock is ahead of ours. */
+  readonly byFileTime_ms: number;
+  /** Since we saw the file as it is now, by our own clock. */
+  readonly seen_ms: number;
+}
+
 /** A text table has to lie still this long before it is taken as finished. */
 export const QUIET_MS = 150;
 /** A file that never gets its closing newline is taken as it is after this long. */
@@ -14,13 +22,12 @@ export const PATIENCE_MS = 2000;
 const NEWLINE = 10;
 
 /**
- * Is a text table finished? It ends with a newline and has not been touched for a while; or it does not, and
- * nothing has come for so long that nothing will. A writer that pauses longer is caught by the later change:
- * the file is read again and replaces its earlier frame.
+ * Is a text table finished? It ends with a newline and has not been touched for a while (an old file that is renamed
+ * into place is taken at once); or it does not, and nothing has come for so long, as we have seen ourselves, that
+ * nothing will. A writer that pauses longer is caught by the later change: the file is read again and replaces its
+ * earlier frame.
  */
-export function isComplete(glance: Glance, now_ms: number): boolean {
-  const still_ms = now_ms - glance.modified_ms;
-  // Modified "in the future": another machine's clock. Then the size has to speak, which the caller watches.
-  if (still_ms < 0) return glance.lastByte === NEWLINE;
-  return glance.lastByte === NEWLINE ? still_ms >= QUIET_MS : still_ms >= PATIENCE_MS;
+export function isComplete({ lastByte }: Glance, still: Stillness): boolean {
+  if (lastByte !== NEWLINE) return still.seen_ms >= PATIENCE_MS;
+  return Math.max(still.byFileTime_ms, still.seen_ms) >= QUIET_MS;
 }

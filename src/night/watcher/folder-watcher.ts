@@ -1,5 +1,5 @@
 import { type FSWatcher as FolderHandle, watch as watchFolder } from 'node:fs';
-import { readdir, stat } from 'node:fs/promises';
+import { lstat, readdir, stat } from 'node:fs/promises';
 import { basename, dirname, join, resolve } from 'node:path';
 import { type FSWatcher, watch as watchParent } from 'chokidar';
 import { isComplete } from './completeness.js';
@@ -32,12 +32,18 @@ export class FolderWatcher {
   private readonly folder: string;
   private readonly parent: FSWatcher;
   private handle: FolderHandle | undefined;
+  /** Which folder the handle watches: number and birth, as one made anew may get the old number. */
+  private watched: string | undefined;
   private readonly waiting = new Set<string>();
+  /** Since when each waiting file has been as it is. */
+  private readonly seen = new Map<string, { readonly key: string; readonly since_ms: number }>();
   /** Size and time of each file when it was last delivered or refused. */
   private readonly done = new Map<string, string>();
   private timer: NodeJS.Timeout | undefined;
   private readonly relist: NodeJS.Timeout;
   private working = false;
+  private listing = false;
+  private askedAgain = false;
   private closed = false;
 
   constructor(
@@ -53,12 +59,12 @@ export class FolderWatcher {
       interval: POLL_MS,
       ignored: path => path !== dirname(this.folder) && path !== this.folder,
     });
-    this.parent.on('addDir', path => path === this.folder && this.attach());
-    this.parent.on('unlinkDir', path => path === this.folder && this.detach());
+    this.parent.on('addDir', path => path === this.folder && void this.list());
+    this.parent.on('unlinkDir', path => path === this.folder && this.gone());
     // A parent that cannot be watched costs only the notice of the folder's return: the list finds it.
     this.parent.on('error', () => {});
     this.relist = setInterval(() => void this.list(), poll ? POLL_MS : RELIST_MS);
-    this.attach();
+    void this.list();
   }
 
   /** Lists the folder now instead of waiting for the next time. */
@@ -70,27 +76,31 @@ export class FolderWatcher {
     this.closed = true;
     clearInterval(this.relist);
     clearTimeout(this.timer);
-    this.handle?.close();
+    this.detach();
     await this.parent.close();
   }
 
-  private attach(): void {
-    this.handle?.close();
-    this.handle = undefined;
-    if (!this.poll) {
-      try {
-        this.handle = watchFolder(this.folder, (_, name) => name !== null && this.notice(name));
-        this.handle.on('error', () => this.detach());
-      } catch {
-        // Not there yet, or no watches left: the list goes on.
-      }
+  /** Watches the folder that stands there now. */
+  private attach(folder: string): void {
+    if (this.poll || this.watched === folder) return;
+    this.detach();
+    try {
+      this.handle = watchFolder(this.folder, (_, name) => name !== null && this.notice(name));
+      this.handle.on('error', () => this.detach());
+      this.watched = folder;
+    } catch {
+      // Gone again, or no watches left: the list goes on.
     }
-    void this.list();
   }
 
   private detach(): void {
     this.handle?.close();
     this.handle = undefined;
+    this.watched = undefined;
+  }
+
+  private gone(): void {
+    this.detach();
     this.handlers.onFolder(false);
   }
 
@@ -102,25 +112,39 @@ export class FolderWatcher {
 
   /** Lists the folder and notices every file that is new or has changed, oldest first. */
   private async list(): Promise<void> {
-    let names: string[];
-    try {
-      names = await readdir(this.folder);
-    } catch {
-      this.handlers.onFolder(false);
+    if (this.closed) return;
+    // A disk that answers slowly is not asked again before it has.
+    this.askedAgain = this.listing;
+    if (this.listing) return;
+    this.listing = true;
+    const fresh = await this.freshFiles().catch(() => undefined);
+    this.listing = false;
+    if (this.closed) return;
+    if (this.askedAgain) void this.list();
+    if (fresh === undefined) {
+      this.gone();
       return;
     }
     this.handlers.onFolder(true);
-    const fresh: { name: string; time: number }[] = [];
-    for (const name of names) {
+    for (const name of fresh) this.notice(name);
+    if (fresh.length === 0 && this.waiting.size === 0 && !this.working) this.handlers.onIdle();
+  }
+
+  /** Names of files that are new or have changed, oldest first. Throws when the folder is not there. */
+  private async freshFiles(): Promise<readonly string[]> {
+    // Watched before it is listed: what comes in between is noticed.
+    const { ino, birthtimeMs } = await stat(this.folder);
+    if (!this.closed) this.attach(`${ino} ${birthtimeMs}`);
+    const fresh: { readonly name: string; readonly time: number }[] = [];
+    for (const name of await readdir(this.folder)) {
       if (UNFINISHED.test(name)) continue;
-      const status = await stat(join(this.folder, name)).catch(() => undefined);
+      const status = await lstat(join(this.folder, name)).catch(() => undefined);
       if (status === undefined || status.isDirectory()) continue;
       if (this.done.get(name) !== keyOf(status.size, status.mtimeMs))
         fresh.push({ name, time: status.mtimeMs });
     }
     fresh.sort((a, b) => a.time - b.time || (a.name < b.name ? -1 : 1));
-    for (const { name } of fresh) this.notice(name);
-    if (fresh.length === 0 && this.waiting.size === 0 && !this.working) this.handlers.onIdle();
+    return fresh.map(({ name }) => name);
   }
 
   private schedule(delay_ms: number): void {
@@ -135,7 +159,10 @@ export class FolderWatcher {
     this.working = true;
     for (const name of [...this.waiting]) {
       if (this.closed) return;
-      if (await this.tryFile(name)) this.waiting.delete(name);
+      // Taken off first: a change that comes while the file is read puts it back.
+      this.waiting.delete(name);
+      if (await this.tryFile(name)) this.seen.delete(name);
+      else this.waiting.add(name);
     }
     this.working = false;
     if (this.waiting.size > 0) this.schedule(RECHECK_MS);
@@ -153,13 +180,22 @@ export class FolderWatcher {
     if (isRefusal(seen)) return this.refuse(name, seen, seen.code);
     const key = keyOf(seen.bytes, seen.modified_ms);
     if (this.done.get(name) === key) return true;
-    if (!isComplete(seen, Date.now())) return false;
+    const still = { byFileTime_ms: Date.now() - seen.modified_ms, seen_ms: this.seenFor_ms(name, key) };
+    if (!isComplete(seen, still)) return false;
     const bytes = await readWhole(path);
     if (bytes === undefined) return true;
     if (isRefusal(bytes)) return this.refuse(name, bytes, key);
     this.done.set(name, key);
     await this.handlers.onFile(name, bytes);
     return true;
+  }
+
+  /** How long the file has been as it is now, by a clock that nobody sets. */
+  private seenFor_ms(name: string, key: string): number {
+    const known = this.seen.get(name);
+    if (known?.key === key) return performance.now() - known.since_ms;
+    this.seen.set(name, { key, since_ms: performance.now() });
+    return 0;
   }
 
   private refuse(name: string, refusal: Refusal, key: string): true {

@@ -1,5 +1,5 @@
 import { constants } from 'node:fs';
-import { type FileHandle, open } from 'node:fs/promises';
+import { type FileHandle, lstat, open } from 'node:fs/promises';
 import { LIMITS } from '../../catalogue/limits.js';
 import type { ProblemCode } from '../../catalogue/problem-codes.js';
 import type { Glance } from './completeness.js';
@@ -10,8 +10,12 @@ export interface Refusal {
   readonly seen: string;
 }
 
-/** Looks at a file: size, time, last byte. Undefined when it is gone. */
+/** Looks at a file in a watched folder: size, time, last byte. Undefined when it is gone, or a folder. */
 export async function glance(path: string): Promise<Glance | Refusal | undefined> {
+  const entry = await lstat(path).catch(() => undefined);
+  if (entry?.isDirectory()) return undefined;
+  // A link may lead anywhere, out of the folder too; only `classify`, which is given names, follows one.
+  if (entry?.isSymbolicLink()) return { code: 'not-regular', seen: 'this is a link' };
   return await withRegularFile(path, async (file, status) => {
     const last = Buffer.alloc(1);
     if (status.size > 0) await file.read(last, 0, 1, status.size - 1);

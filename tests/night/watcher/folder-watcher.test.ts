@@ -5,6 +5,7 @@ import {
   mkdtempSync,
   renameSync,
   rmSync,
+  symlinkSync,
   unlinkSync,
   utimesSync,
   writeFileSync,
@@ -108,6 +109,71 @@ describe('FolderWatcher', () => {
     expect(folders.at(-1)).toBe(true);
   });
 
+  it('sees at once what comes into a folder that was made again', async () => {
+    const { files } = start();
+    writeFileSync(path('before.csv'), 'before\n');
+    await until(() => expect(files).toHaveLength(1));
+    rmSync(folder, { recursive: true });
+    mkdirSync(folder);
+    for (const name of ['one.csv', 'two.csv']) {
+      writeFileSync(path(name), `${name}\n`);
+      await until(() => expect(files.at(-1)?.[0]).toBe(name));
+    }
+  });
+
+  it('takes an old file that is renamed into place', async () => {
+    const { files } = start();
+    const elsewhere = join(parent, 'old.csv');
+    writeFileSync(elsewhere, 'old\n');
+    utimesSync(elsewhere, 1000, 1000);
+    renameSync(elsewhere, path('old.csv'));
+    await until(() => expect(files).toEqual([['old.csv', 'old\n']]));
+  });
+
+  it('a file without closing newline is taken in the end, even from a clock an hour ahead', async () => {
+    const { files } = start();
+    writeFileSync(path('ahead.csv'), 'ra,dec\n1,2');
+    utimesSync(path('ahead.csv'), Date.now() / 1000 + 3600, Date.now() / 1000 + 3600);
+    await until(() => expect(files).toEqual([['ahead.csv', 'ra,dec\n1,2']]));
+  });
+
+  it('a slow writer whose clock is an hour behind is waited for all the same', async () => {
+    const { files } = start();
+    writeFileSync(path('behind.csv'), 'ra,dec\n1');
+    utimesSync(path('behind.csv'), Date.now() / 1000 - 3600, Date.now() / 1000 - 3600);
+    await new Promise(resolve => setTimeout(resolve, 300));
+    appendFileSync(path('behind.csv'), ',2\n');
+    await until(() => expect(files).toEqual([['behind.csv', 'ra,dec\n1,2\n']]));
+  });
+
+  it('refuses a link, and passes folders over in silence, whenever they came', async () => {
+    mkdirSync(path('early'));
+    writeFileSync(join(parent, 'secret.csv'), 'secret\n');
+    symlinkSync(join(parent, 'secret.csv'), path('link.csv'));
+    const { files, refused } = start();
+    mkdirSync(path('late'));
+    writeFileSync(path('good.csv'), 'good\n');
+    await until(() => expect(files.map(([name]) => name)).toEqual(['good.csv']));
+    await until(() => expect(refused).toEqual([['link.csv', 'not-regular']]));
+  });
+
+  it('reads again what changed while it was being handled', async () => {
+    const texts: string[] = [];
+    watcher = new FolderWatcher(folder, false, {
+      onFile: async (_, bytes) => {
+        texts.push(Buffer.from(bytes).toString());
+        if (texts.length > 1) return;
+        appendFileSync(path('f.csv'), 'two\n');
+        await new Promise(resolve => setTimeout(resolve, 300));
+      },
+      onRefused: () => {},
+      onFolder: () => {},
+      onIdle: () => {},
+    });
+    writeFileSync(path('f.csv'), 'one\n');
+    await until(() => expect(texts).toEqual(['one\n', 'one\ntwo\n']));
+  });
+
   it('finds files by polling, and a deleted one costs nothing', async () => {
     const { files } = start(true);
     writeFileSync(path('gone.csv'), 'no newline yet');
@@ -118,18 +184,24 @@ describe('FolderWatcher', () => {
 });
 
 describe('the rule of completeness', () => {
-  const at = (age_ms: number, lastByte: number | undefined) =>
-    isComplete({ bytes: 10, modified_ms: 1000, lastByte }, 1000 + age_ms);
+  const at = (byFileTime_ms: number, seen_ms: number, lastByte: number | undefined) =>
+    isComplete({ bytes: 10, modified_ms: 1000, lastByte }, { byFileTime_ms, seen_ms });
   it('a closing newline needs a little quiet', () => {
-    expect(at(QUIET_MS - 1, 10)).toBe(false);
-    expect(at(QUIET_MS, 10)).toBe(true);
+    expect(at(QUIET_MS - 1, 0, 10)).toBe(false);
+    expect(at(QUIET_MS, 0, 10)).toBe(true);
   });
-  it('no closing newline needs patience', () => {
-    expect(at(PATIENCE_MS - 1, 49)).toBe(false);
-    expect(at(PATIENCE_MS, 49)).toBe(true);
+  it('no closing newline needs patience by our own clock', () => {
+    expect(at(PATIENCE_MS, PATIENCE_MS - 1, 49)).toBe(false);
+    expect(at(PATIENCE_MS, PATIENCE_MS, 49)).toBe(true);
+    expect(at(3_600_000, 0, 49)).toBe(false);
   });
-  it('a file from a clock ahead of ours is taken by its newline alone', () => {
-    expect(at(-5000, 10)).toBe(true);
-    expect(at(-5000, 49)).toBe(false);
+  it('a file from a clock ahead of ours is judged by what we saw', () => {
+    expect(at(-5000, QUIET_MS - 1, 10)).toBe(false);
+    expect(at(-5000, QUIET_MS, 10)).toBe(true);
+    expect(at(-5000, PATIENCE_MS, 49)).toBe(true);
+  });
+  it('an empty file is given the same patience', () => {
+    expect(at(0, PATIENCE_MS - 1, undefined)).toBe(false);
+    expect(at(0, PATIENCE_MS, undefined)).toBe(true);
   });
 });
