@@ -2,6 +2,7 @@ import { BAND_INDEX } from '../../src/science/bands.js';
 import { CLASSES } from '../../src/science/classes.js';
 import { makeNodes, type Node } from '../../src/science/odds/nodes.js';
 import { readTracks } from '../../src/science/tracks/index.js';
+import { coneVolume, drawDistance_pc } from './draw-distance.js';
 import type { Random } from './random.js';
 import { SCENARIO } from './scenario.js';
 import { anywhere, type DemoStar, placed, randomMotion } from './star.js';
@@ -29,7 +30,7 @@ export function backgroundStars(nodes: readonly Node[], random: Random): DemoSta
   const drawn: DemoStar[] = [];
   while (drawn.length < stars) {
     const i = random.weighted(sums);
-    const distance_pc = drawDistance(random, farthest[i], lengthScale_pc);
+    const distance_pc = drawDistance_pc(random, farthest[i], lengthScale_pc);
     const shift = random.normal(0, scatter_mag) - companionGain(random, 0.2);
     const absV = nodes[i].absMag[V] + shift;
     const absB = nodes[i].absMag[B] + shift + random.normal(0, colourScatter_mag);
@@ -101,24 +102,6 @@ function nodeWidth(node: Node, among: readonly Node[]): number {
   const before = among[Math.max(0, i - 1)].absMag[V];
   const after = among[Math.min(among.length - 1, i + 1)].absMag[V];
   return Math.max(0.01, Math.abs(after - before) / 2);
-}
-
-/** Integral of r^2 exp(-r/L) from 0 to r. */
-function coneVolume(r: number, scale: number): number {
-  const x = r / scale;
-  return scale ** 3 * (2 - Math.exp(-x) * (x * x + 2 * x + 2));
-}
-
-function drawDistance(random: Random, farthest_pc: number, scale: number): number {
-  const target = random.uniform() * coneVolume(farthest_pc, scale);
-  let low = 0;
-  let high = farthest_pc;
-  for (let step = 0; step < 50; step++) {
-    const middle = (low + high) / 2;
-    if (coneVolume(middle, scale) < target) low = middle;
-    else high = middle;
-  }
-  return Math.max(5, (low + high) / 2);
 }
 
 function runningSums(weights: readonly number[]): Float64Array {

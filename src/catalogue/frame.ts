@@ -23,9 +23,8 @@ export interface BandColumn {
   readonly sigma_mag: Float64Array;
 }
 
-/** The readable rows of one photometry file, one array element a row, NaN where not given. */
-export interface FrameReadings {
-  readonly facts: FrameFacts;
+/** The rows of one photometry file as columns, one array element a row, NaN where not given. */
+export interface ReadingColumns {
   readonly rows: number;
   /** Empty strings where the file has no identifier column. */
   readonly ids: readonly SafeText[];
@@ -42,4 +41,9 @@ export interface FrameReadings {
   /** 1 where the file's own quality columns (saturated, blended, edge, flags) speak against the reading. */
   readonly suspect: Uint8Array;
   readonly bands: readonly BandColumn[];
+}
+
+/** The readable rows of a file, and what its header says. */
+export interface FrameReadings extends ReadingColumns {
+  readonly facts: FrameFacts;
 }

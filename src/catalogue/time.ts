@@ -12,10 +12,6 @@ export function msOfMjd(mjd: number): number {
   return Math.round((mjd - MJD_OF_UNIX_EPOCH) * MS_PER_DAY);
 }
 
-export function mjdOfMs(time_ms: number): number {
-  return time_ms / MS_PER_DAY + MJD_OF_UNIX_EPOCH;
-}
-
 /** A double holds a Julian Date to 0.04 ms only; so does this. */
 export function msOfJd(jd: number): number {
   return msOfMjd(jd - 2_400_000.5);

@@ -1,12 +1,11 @@
 import type { FromWorker } from '../night/messages.js';
 import type { NightView } from '../night/view.js';
 import type { WorkerClient } from '../night/worker-client.js';
-import { PlainNight } from '../screens/plain/plain-night.js';
+import { PlainNight, summaryLines } from '../screens/plain/plain-night.js';
 import { EXIT } from './exit-codes.js';
 import type { CommandIo } from './io.js';
 import type { NightPlayer } from './night-player.js';
 import { type NightSource, startWorker } from './night-source.js';
-import { ToldProblems } from './told-problems.js';
 
 /** A played night is over when its last file has been quiet for this long. */
 const SETTLED_MS = 500;
@@ -17,7 +16,6 @@ const SIGNALS = { SIGINT: EXIT.interrupted, SIGTERM: 143, SIGHUP: 129 } as const
 /** Tells the night in plain lines until it is over (a played one) or interrupted. */
 export async function runPlain(source: NightSource, io: CommandIo, player?: NightPlayer): Promise<number> {
   const plain = new PlainNight();
-  const told = new ToldProblems();
   let latest: NightView | undefined;
   let printing: Promise<void> = Promise.resolve();
   const print = (lines: readonly string[]) => {
@@ -38,7 +36,7 @@ export async function runPlain(source: NightSource, io: CommandIo, player?: Nigh
       const onMessage = (message: FromWorker) => {
         if (message.kind === 'view') {
           latest = message.view;
-          print(plain.next(told.through(message.view)));
+          print(plain.next(message.view));
           printing.catch(reject);
         }
         if (message.kind === 'idle' && isOver(message.files)) resolve(EXIT.ok);
@@ -62,7 +60,7 @@ export async function runPlain(source: NightSource, io: CommandIo, player?: Nigh
     for (const undo of off) undo();
     clearInterval(asking);
     await worker?.stop();
-    if (latest !== undefined) print(plain.summary(latest));
+    if (latest !== undefined) print(summaryLines(latest));
     await printing;
   }
 }

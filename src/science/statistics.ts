@@ -1,19 +1,3 @@
-/** Arithmetic mean; NaN of nothing. */
-export function mean(values: ArrayLike<number>): number {
-  let sum = 0;
-  for (let i = 0; i < values.length; i++) sum += values[i];
-  return sum / values.length;
-}
-
-/** Unbiased variance; NaN of fewer than two values. */
-export function variance(values: ArrayLike<number>): number {
-  if (values.length < 2) return Number.NaN;
-  const centre = mean(values);
-  let sum = 0;
-  for (let i = 0; i < values.length; i++) sum += (values[i] - centre) ** 2;
-  return sum / (values.length - 1);
-}
-
 /**
  * Quantile by linear interpolation between the order statistics (type 7 of Hyndman & Fan 1996, Am. Stat. 50,
  * 361). NaN of nothing; the values must be finite.
@@ -29,11 +13,6 @@ export function quantile(values: ArrayLike<number>, share: number): number {
 
 export function median(values: ArrayLike<number>): number {
   return quantile(values, 0.5);
-}
-
-/** Third quartile minus first: 1.349 sigma of a Gaussian. */
-export function interquartileRange(values: ArrayLike<number>): number {
-  return quantile(values, 0.75) - quantile(values, 0.25);
 }
 
 /** 1.4826 times the median absolute deviation: sigma of a Gaussian, blind to outliers; 0 when half are equal. */
@@ -91,18 +70,7 @@ export function gammaQ(a: number, x: number): number {
   return front * fraction;
 }
 
-/** Probability that a Gaussian deviate exceeds z sigma. */
-export function gaussianUpperTail(z: number): number {
-  const tail = gammaQ(0.5, (z * z) / 2) / 2;
-  return z >= 0 ? tail : 1 - tail;
-}
-
 /** Probability that a chi-square by chance reaches this value. */
 export function chiSquareChance(chi2: number, degreesOfFreedom: number): number {
   return gammaQ(degreesOfFreedom / 2, chi2 / 2);
-}
-
-/** Probability that at least one of n independent trials gives what one gives with probability p. */
-export function chanceOfAny(p: number, trials: number): number {
-  return -Math.expm1(trials * Math.log1p(-p));
 }

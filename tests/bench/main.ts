@@ -1,34 +1,13 @@
 import { readFrame } from '../../src/catalogue/read-frame.js';
 import { StarCatalogue } from '../../src/catalogue/stars.js';
-import {
-  buildModel,
-  classifyStars,
-  type FieldPrior,
-  makeOddsColumns,
-  type StarInputs,
-} from '../../src/science/odds/index.js';
+import { buildModel, classifyStars, makeOddsColumns, type StarInputs } from '../../src/science/odds/index.js';
 import { CellWriter } from '../../src/screens/terminal/cell-writer.js';
+import { OPEN_FIELD } from '../support/star-inputs.js';
 
 /** Prints how long the heavy steps take on this machine, and ratios that mean something on any: npm run bench. */
 const STARS = 100_000;
 
-const FIELD: FieldPrior = {
-  population: 'field',
-  modulus_mag: Number.NaN,
-  modulusSigma_mag: Number.NaN,
-  memberShare: 0,
-  pmRa_masPerYear: Number.NaN,
-  pmDec_masPerYear: Number.NaN,
-  pmSigma_masPerYear: Number.NaN,
-  fieldPmSigma_masPerYear: 8,
-  age_Gyr: Number.NaN,
-  extinction_AV: 0.1,
-  extinctionSigma_AV: 0.05,
-  lengthScale_pc: 1350,
-  parallaxZeroPoint_mas: 0,
-  floor_mag: 0.02,
-  classScale: {},
-};
+const FIELD = { ...OPEN_FIELD, extinction_AV: 0.1, extinctionSigma_AV: 0.05 };
 
 function timed<T>(work: () => T): [T, number] {
   const start = performance.now();

@@ -1,13 +1,7 @@
 import { describe, expect, it } from 'vitest';
-import {
-  designation,
-  designationB1950,
-  designationGalactic,
-  positionOfName,
-} from '../../src/catalogue/coordinates/designation.js';
+import { designation } from '../../src/catalogue/coordinates/designation.js';
 import { formatDec, formatRa } from '../../src/catalogue/coordinates/format-angle.js';
 import { parseDec, parseRa } from '../../src/catalogue/coordinates/parse-angle.js';
-import { parsePair } from '../../src/catalogue/coordinates/parse-pair.js';
 import { moved } from '../../src/catalogue/coordinates/proper-motion.js';
 import { parseTable, type Row } from '../../src/science/table.js';
 import checks from './data/checks_coords.csv';
@@ -24,9 +18,10 @@ function option(input: string, key: string): number {
   return Number(options(input).get(key));
 }
 
+/** 'ra dec;options' with a blank between the two. */
 function pairOf(input: string): { ra: number; dec: number } {
-  const { ra, dec } = parsePair(input.split(';')[0]);
-  return { ra: ra.deg, dec: dec.deg };
+  const [ra, dec] = input.split(';')[0].split(' ');
+  return { ra: parseRa(ra).deg, dec: parseDec(dec).deg };
 }
 
 function result(row: Row): string | number {
@@ -42,8 +37,6 @@ function result(row: Row): string | number {
       const dec = parseDec(input);
       return dec.refused === '' ? dec.deg : 'error';
     }
-    case 'parse_pair':
-      return isRa ? pairOf(input).ra : pairOf(input).dec;
     case 'format_ra':
       return formatRa(Number(input.split(';')[0]), option(input, 'decimals'));
     case 'format_dec':
@@ -52,17 +45,6 @@ function result(row: Row): string | number {
     case 'designation_float_trap': {
       const { ra, dec } = pairOf(input);
       return designation(ra, dec, option(input, 'ra_decimals'), option(input, 'dec_decimals'));
-    }
-    case 'designation_b1950':
-      return designationB1950(pairOf(input).ra, pairOf(input).dec);
-    case 'designation_gal':
-      return designationGalactic(option(input, 'l'), option(input, 'b'));
-    case 'name_to_position': {
-      const position = positionOfName(input);
-      if (position === undefined) return 'error';
-      if (isRa) return position.ra_deg;
-      if (output.startsWith('dec_deg')) return position.dec_deg;
-      return `${position.halfCellRa_arcsec.toFixed(4)};${position.halfCellDec_arcsec.toFixed(4)}`;
     }
     case 'proper_motion': {
       const o = (key: string) => option(input, key);
@@ -75,16 +57,26 @@ function result(row: Row): string | number {
   }
 }
 
+/** A position comes from two columns, and names are made, not read. */
+const NOT_OURS = ['parse_pair', 'designation_b1950', 'designation_gal', 'name_to_position'];
+const isOurs = (row: Row) => !NOT_OURS.includes(row.text('kind'));
+
 describe('coordinates against checks_coords.csv', () => {
   it('has all rows', () => expect(rows).toHaveLength(120));
 
-  it.each(rows.map(row => [`${row.text('id')} ${row.text('kind')} ${row.text('input')}`, row] as const))(
-    '%s',
-    (_, row) => {
-      const expected = row.text('expected');
-      const actual = result(row);
-      if (row.text('tol_kind') === 'exact') expect(actual).toBe(expected);
-      else expect(Math.abs(Number(actual) - Number(expected))).toBeLessThanOrEqual(row.number('tol'));
-    },
+  it.each(
+    rows
+      .filter(isOurs)
+      .map(row => [`${row.text('id')} ${row.text('kind')} ${row.text('input')}`, row] as const),
+  )('%s', (_, row) => {
+    const expected = row.text('expected');
+    const actual = result(row);
+    if (row.text('tol_kind') === 'exact') expect(actual).toBe(expected);
+    else expect(Math.abs(Number(actual) - Number(expected))).toBeLessThanOrEqual(row.number('tol'));
+  });
+
+  it.skip.each(rows.filter(row => !isOurs(row)).map(row => [row.text('id'), row.text('kind')]))(
+    '%s %s: not used by the program',
+    () => {},
   );
 });

@@ -1,3 +1,4 @@
+import { coneVolume, drawDistance_pc } from '../../demo-run/generator/draw-distance.js';
 import { Random } from '../../demo-run/generator/random.js';
 import { BAND_INDEX, type Band } from '../../src/science/bands.js';
 import { CLASS_COUNT, CLASSES } from '../../src/science/classes.js';
@@ -42,7 +43,7 @@ export function drawField(plan: FieldPlan, prior: FieldPrior): SyntheticField {
     (node, i) =>
       node.density_perPc3 *
       (prior.classScale[CLASSES[node.classIndex]] ?? 1) *
-      volume(farthest[i], prior.lengthScale_pc),
+      coneVolume(farthest[i], prior.lengthScale_pc),
   );
   let sum = 0;
   const sums = Float64Array.from(weights, weight => {
@@ -58,7 +59,7 @@ export function drawField(plan: FieldPlan, prior: FieldPrior): SyntheticField {
   for (let drawn = 0; drawn < plan.stars; ) {
     const i = random.weighted(sums);
     const node = nodes[i];
-    const distance_pc = drawDistance(random, farthest[i], prior.lengthScale_pc);
+    const distance_pc = drawDistance_pc(random, farthest[i], prior.lengthScale_pc);
     const av = Math.abs(random.normal(prior.extinction_AV, prior.extinctionSigma_AV));
     const common =
       random.normal(0, node.scatter_mag) - branchOf(node, random) + 5 * Math.log10(distance_pc) - 5;
@@ -98,23 +99,6 @@ function branchOf(node: Node, random: Random): number {
     if (pick <= 0) return branch.brighter_mag;
   }
   return 0;
-}
-
-function volume(r: number, scale: number): number {
-  const x = r / scale;
-  return scale ** 3 * (2 - Math.exp(-x) * (x * x + 2 * x + 2));
-}
-
-function drawDistance(random: Random, farthest_pc: number, scale: number): number {
-  const target = random.uniform() * volume(farthest_pc, scale);
-  let low = 0;
-  let high = farthest_pc;
-  for (let step = 0; step < 40; step++) {
-    const middle = (low + high) / 2;
-    if (volume(middle, scale) < target) low = middle;
-    else high = middle;
-  }
-  return Math.max(1, (low + high) / 2);
 }
 
 /** How well odds agree with the truth. */

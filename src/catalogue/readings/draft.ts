@@ -1,24 +1,11 @@
-import type { BandColumn } from '../frame.js';
-import type { SafeText } from '../safe-text.js';
+import type { ReadingColumns } from '../frame.js';
 
 /** A file's rows on the way to readings: whole columns, and which rows are still wanted. */
-export interface Draft {
-  readonly rows: number;
+export interface Draft extends ReadingColumns {
   /** 0 for rows that have to go. */
   readonly kept: Uint8Array;
+  /** Line of each row in the file. */
   readonly lines: Uint32Array;
-  /** Empty where there is none. */
-  readonly ids: readonly SafeText[];
-  readonly hasIds: boolean;
-  readonly ra_deg: Float64Array;
-  readonly dec_deg: Float64Array;
-  readonly parallax_mas: Float64Array;
-  readonly parallax_sigma_mas: Float64Array;
-  readonly pmRa_masPerYear: Float64Array;
-  readonly pmDec_masPerYear: Float64Array;
-  readonly reddening_EBV: Float64Array;
-  readonly suspect: Uint8Array;
-  readonly bands: readonly BandColumn[];
 }
 
 /** Tells rows of the same star apart from others: by identifier, else by position to 0.04 arcsec. */

@@ -69,8 +69,3 @@ export function splitExposure(
     count = needed;
   }
 }
-
-/** Standard error of a magnitude, first order: 2.5 / ln 10 over the S/N. */
-export function magnitudeError_mag(snr: number): number {
-  return 2.5 / Math.LN10 / snr;
-}

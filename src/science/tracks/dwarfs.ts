@@ -1,7 +1,14 @@
 import dwarfsText from '../../tables/dwarfs.csv';
 import { subtypeNumber } from '../spectral-subtype.js';
 import { parseTable, type Row } from '../table.js';
-import { fillBand, magnitude, type Track, type TrackPoint, unknownMagnitudes } from './track.js';
+import {
+  fillBand,
+  fillFromColours,
+  magnitude,
+  type Track,
+  type TrackPoint,
+  unknownMagnitudes,
+} from './track.js';
 
 /**
  * Class V from O3 to T9.5: Pecaut & Mamajek 2013, ApJS 208, 9, Table 5, in the authors' extended version of
@@ -15,12 +22,12 @@ export function dwarfTrack(fillMissing: (absMag: Float64Array) => void): Track {
 function dwarfPoint(row: Row, fillMissing: (absMag: Float64Array) => void): TrackPoint {
   const absMag = unknownMagnitudes();
   const v = row.number('M_V');
-  const b = v + row.number('B_V');
-  fillBand(absMag, 'V', v);
-  fillBand(absMag, 'B', b);
-  fillBand(absMag, 'U', b + row.number('U_B'));
-  fillBand(absMag, 'Rc', v - row.number('V_Rc'));
-  fillBand(absMag, 'Ic', v - row.number('V_Ic'));
+  fillFromColours(absMag, v, {
+    B_V: row.number('B_V'),
+    U_B: row.number('U_B'),
+    V_Rc: row.number('V_Rc'),
+    V_Ic: row.number('V_Ic'),
+  });
   const ks = row.number('M_Ks');
   fillBand(absMag, 'Ks', Number.isNaN(v - row.number('V_Ks')) ? ks : v - row.number('V_Ks'));
   fillBand(absMag, 'H', magnitude(absMag, 'Ks') + row.number('H_Ks'));

@@ -6,7 +6,14 @@ import { BAND_INDEX } from '../bands.js';
 import type { StarClass } from '../classes.js';
 import { subtypeNumber } from '../spectral-subtype.js';
 import { parseTable, type Row, type Table } from '../table.js';
-import { fillBand, magnitude, type Track, type TrackPoint, unknownMagnitudes } from './track.js';
+import {
+  fillBand,
+  fillFromColours,
+  magnitude,
+  type Track,
+  type TrackPoint,
+  unknownMagnitudes,
+} from './track.js';
 
 /**
  * Subgiants, giants, bright giants and supergiants: adopted M_V, B-V and Teff of src/tables, whose headers
@@ -38,12 +45,12 @@ function evolvedTrack(
   const point = (row: Row): TrackPoint => {
     const absMag = unknownMagnitudes();
     const v = row.number('M_V');
-    const b = v + row.number('B_V');
-    fillBand(absMag, 'V', v);
-    fillBand(absMag, 'B', b);
-    fillBand(absMag, 'U', b + optional(row, 'U_B_Pickles'));
-    fillBand(absMag, 'Rc', v - optional(row, 'V_Rc'));
-    fillBand(absMag, 'Ic', v - optional(row, 'V_Ic'));
+    fillFromColours(absMag, v, {
+      B_V: row.number('B_V'),
+      U_B: optional(row, 'U_B_Pickles'),
+      V_Rc: optional(row, 'V_Rc'),
+      V_Ic: optional(row, 'V_Ic'),
+    });
     fillBand(absMag, 'Ks', v - optional(row, 'V_Ks_Mamajek'));
     fillBand(absMag, 'H', magnitude(absMag, 'Ks') + optional(row, 'H_Ks'));
     fillBand(absMag, 'J', magnitude(absMag, 'H') + optional(row, 'J_H'));

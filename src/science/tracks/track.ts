@@ -29,6 +29,20 @@ export function fillBand(absMag: Float64Array, band: Band, value: number): void 
   if (Number.isNaN(absMag[index])) absMag[index] = value;
 }
 
+/** U, B, V, Rc and Ic from M_V and the colours a table gives, NaN where it does not. */
+export function fillFromColours(
+  absMag: Float64Array,
+  v: number,
+  colours: { readonly B_V: number; readonly U_B: number; readonly V_Rc: number; readonly V_Ic: number },
+): void {
+  const b = v + colours.B_V;
+  fillBand(absMag, 'V', v);
+  fillBand(absMag, 'B', b);
+  fillBand(absMag, 'U', b + colours.U_B);
+  fillBand(absMag, 'Rc', v - colours.V_Rc);
+  fillBand(absMag, 'Ic', v - colours.V_Ic);
+}
+
 export function magnitude(absMag: Float64Array, band: Band): number {
   return absMag[BAND_INDEX[band]];
 }

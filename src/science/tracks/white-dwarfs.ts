@@ -1,7 +1,7 @@
 import whiteDwarfsText from '../../tables/white_dwarfs.csv';
 import type { Band } from '../bands.js';
 import { parseTable, type Row } from '../table.js';
-import { fillBand, type Track, type TrackPoint, unknownMagnitudes } from './track.js';
+import { fillBand, fillFromColours, type Track, type TrackPoint, unknownMagnitudes } from './track.js';
 
 /**
  * White-dwarf cooling sequences at log g 8.0: Montreal models of 2021 (Holberg & Bergeron 2006, AJ 132, 1221;
@@ -34,12 +34,12 @@ const DIRECT: readonly (readonly [Band, string])[] = [
 function whiteDwarfPoint(row: Row): TrackPoint {
   const absMag = unknownMagnitudes();
   const v = row.number('M_V');
-  const b = v + row.number('B_V');
-  fillBand(absMag, 'V', v);
-  fillBand(absMag, 'B', b);
-  fillBand(absMag, 'U', b + row.number('U_B'));
-  fillBand(absMag, 'Rc', v - row.number('V_Rc'));
-  fillBand(absMag, 'Ic', v - row.number('V_Ic'));
+  fillFromColours(absMag, v, {
+    B_V: row.number('B_V'),
+    U_B: row.number('U_B'),
+    V_Rc: row.number('V_Rc'),
+    V_Ic: row.number('V_Ic'),
+  });
   fillBand(absMag, 'Ks', v - row.number('V_Ks'));
   for (const [band, column] of DIRECT) fillBand(absMag, band, row.number(column));
   const rp = row.number('M_G') - row.number('G_RP');

@@ -1,4 +1,4 @@
-import { chiSquareChance, mean, variance } from '../statistics.js';
+import { chiSquareChance } from '../statistics.js';
 import type { Series } from './series.js';
 
 export interface ConstancyTest {
@@ -50,20 +50,4 @@ export function testConstancyWithoutWorst(series: Series): ConstancyTest {
   let worst = 0;
   for (let i = 1; i < series.mag.length; i++) if (deviation(i) > deviation(worst)) worst = i;
   return testConstancy(series, worst);
-}
-
-/** Scatter beyond the errors, mag^2; negative where the errors are larger than the scatter. */
-export function excessVariance({ mag, sigma_mag }: Series): number {
-  return variance(mag) - mean(Float64Array.from(sigma_mag, sigma => sigma * sigma));
-}
-
-/** Faintest minus brightest reading over their combined error. */
-export function peakToPeakSignificance({ mag, sigma_mag }: Series): number {
-  let faintest = 0;
-  let brightest = 0;
-  for (let i = 1; i < mag.length; i++) {
-    if (mag[i] > mag[faintest]) faintest = i;
-    if (mag[i] < mag[brightest]) brightest = i;
-  }
-  return (mag[faintest] - mag[brightest]) / Math.hypot(sigma_mag[faintest], sigma_mag[brightest]);
 }

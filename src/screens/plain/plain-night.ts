@@ -1,4 +1,4 @@
-import { formatProblem } from '../../catalogue/problems.js';
+import { formatProblem, type Problem } from '../../catalogue/problems.js';
 import type { FrameSummary, NightView, ShortlistEntry } from '../../night/view.js';
 import { costSummary } from '../pictures/files-page.js';
 import { byOdds, exposureWords, firstPossible, flagWords, startByWords } from '../pictures/star-words.js';
@@ -8,25 +8,27 @@ import { clockText } from '../pictures/text.js';
 /** Tells a night as lines of text, for pipes and log files: each thing once, when it comes. */
 export class PlainNight {
   private previous: NightView | undefined;
+  private readonly toldProblems = new Set<string>();
 
-  /** What is new since the view before. */
+  /**
+   * One line for each frame read, each star newly flagged (with reason, exposure and latest start) or no longer
+   * flagged, and each problem that has not been told.
+   */
   next(view: NightView): string[] {
-    const lines = newLines(view, this.previous);
+    const lines = newLines(view, this.previous, this.newProblems(view.problems));
     this.previous = view;
     return lines;
   }
 
-  /** How the night stands at its end. */
-  summary(view: NightView): string[] {
-    return summaryLines(view);
+  /** Problems come and go as files are written again; a line once printed stays. */
+  private newProblems(problems: readonly Problem[]): readonly string[] {
+    const fresh = problems.map(formatProblem).filter(text => !this.toldProblems.has(text));
+    for (const text of fresh) this.toldProblems.add(text);
+    return fresh;
   }
 }
 
-/**
- * One line for each frame read, each star newly flagged (with reason, exposure and latest start) or no longer
- * flagged, and each problem since the previous view.
- */
-export function newLines(view: NightView, previous: NightView | undefined): string[] {
+function newLines(view: NightView, previous: NightView | undefined, problems: readonly string[]): string[] {
   const time = `${clockText(view.time_ms)} UT`;
   const before = new Map(previous?.shortlist.map(entry => [entry.star, entry]));
   const now = new Set(view.shortlist.map(entry => entry.star));
@@ -34,9 +36,7 @@ export function newLines(view: NightView, previous: NightView | undefined): stri
   const gone = [...before.values()].filter(entry => !now.has(entry.star));
   return [
     ...newFrames(view, previous).map(frame => `${time}  frame    ${frameText(frame)}`),
-    ...view.problems
-      .slice(previous?.problems.length ?? 0)
-      .map(problem => `${time}  problem  ${formatProblem(problem)}`),
+    ...problems.map(problem => `${time}  problem  ${problem}`),
     ...flagged.map(entry => `${time}  flagged  ${entryText(entry, view.time_ms)}`),
     ...gone.map(entry => `${time}  cleared  ${entry.id}: no longer flagged`),
   ];

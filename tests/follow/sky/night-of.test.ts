@@ -2,19 +2,8 @@ import { describe, expect, it } from 'vitest';
 import type { Site } from '../../../src/follow/settings.js';
 import { Ephemeris } from '../../../src/follow/sky/ephemeris.js';
 import { clock, darkWords, nightOf } from '../../../src/follow/sky/night-of.js';
+import { SITE } from '../../support/site.js';
 
-const SITE: Site = {
-  name: 'invented',
-  latitude_deg: 46.2,
-  longitude_deg: 9.3,
-  height_m: 1650,
-  timeZone: 'UTC',
-  minAltitude_deg: 30,
-  maxAirmass: 2.5,
-  sunLimit_deg: -15,
-  moonDistance_deg: 30,
-  seeing_arcsec: 1.5,
-};
 const DAY_MS = 86_400_000;
 const SAMPLE_MS = 300_000;
 

@@ -4,19 +4,8 @@ import type { Site } from '../../../src/follow/settings.js';
 import { directionOf, Ephemeris } from '../../../src/follow/sky/ephemeris.js';
 import { darkWords, nightOf } from '../../../src/follow/sky/night-of.js';
 import { NightSky } from '../../../src/follow/sky/window.js';
+import { SITE } from '../../support/site.js';
 
-const SITE: Site = {
-  name: 'invented',
-  latitude_deg: 46.2,
-  longitude_deg: 9.3,
-  height_m: 1650,
-  timeZone: 'UTC',
-  minAltitude_deg: 30,
-  maxAirmass: 2.5,
-  sunLimit_deg: -15,
-  moonDistance_deg: 30,
-  seeing_arcsec: 1.5,
-};
 const NOW = Date.UTC(2026, 10, 24, 21);
 
 function skyAt(site: Site, time_ms: number) {

@@ -10,6 +10,15 @@ const star = (absMag: number, bv: number, more: object = {}) => ({
   ...more,
 });
 
+const CLUSTER = {
+  ...OPEN_FIELD,
+  population: 'disc-cluster' as const,
+  modulus_mag: 9.4,
+  modulusSigma_mag: 0.05,
+  memberShare: 0.7,
+  age_Gyr: 0.5,
+};
+
 describe('odds', () => {
   it('sum to 1 for any star, near or far, with or without parallax', () => {
     fc.assert(
@@ -104,33 +113,17 @@ describe('distance', () => {
   });
 
   it('cluster members without parallax take the modulus of the cluster', () => {
-    const cluster = {
-      ...OPEN_FIELD,
-      population: 'disc-cluster' as const,
-      modulus_mag: 9.4,
-      modulusSigma_mag: 0.05,
-      memberShare: 0.7,
-      age_Gyr: 0.5,
-    };
-    const [member] = classifyAll([{ mags: { V: 9.4 + 4.8, B: 9.4 + 5.45 } }], ['B', 'V'], BV_AXES, cluster);
+    const [member] = classifyAll([{ mags: { V: 9.4 + 4.8, B: 9.4 + 5.45 } }], ['B', 'V'], BV_AXES, CLUSTER);
     expect(member.columns.memberOdds[0]).toBeGreaterThan(0.6);
     expect(Math.abs(member.absMag - 4.8)).toBeLessThan(0.4);
   });
 
   it('a parallax that contradicts the cluster makes a non-member', () => {
-    const cluster = {
-      ...OPEN_FIELD,
-      population: 'disc-cluster' as const,
-      modulus_mag: 9.4,
-      modulusSigma_mag: 0.05,
-      memberShare: 0.7,
-      age_Gyr: 0.5,
-    };
     const [foreground] = classifyAll(
       [{ mags: { V: 16.4, B: 16.45 }, parallax_mas: 10, parallaxSigma_mas: 0.1 }],
       ['B', 'V'],
       BV_AXES,
-      cluster,
+      CLUSTER,
     );
     expect(foreground.columns.memberOdds[0]).toBeLessThan(0.01);
     expect(foreground.odds.WD).toBeGreaterThan(0.95);
@@ -139,15 +132,11 @@ describe('distance', () => {
 
 describe('membership', () => {
   const cluster = {
-    ...OPEN_FIELD,
-    population: 'disc-cluster' as const,
-    modulus_mag: 9.4,
-    modulusSigma_mag: 0.05,
+    ...CLUSTER,
     memberShare: 0.4,
     pmRa_masPerYear: 7.4,
     pmDec_masPerYear: -9.1,
     pmSigma_masPerYear: 0.4,
-    age_Gyr: 0.5,
   };
   const moving = (pmRa_masPerYear: number, pmDec_masPerYear: number) => ({
     mags: { V: 9.4 + 4.8, B: 9.4 + 5.45 },

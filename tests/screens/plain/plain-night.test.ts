@@ -1,5 +1,7 @@
 import { describe, expect, it } from 'vitest';
-import { newLines, PlainNight, summaryLines } from '../../../src/screens/plain/plain-night.js';
+import { makeProblem } from '../../../src/catalogue/problems.js';
+import { safeText } from '../../../src/catalogue/safe-text.js';
+import { PlainNight, summaryLines } from '../../../src/screens/plain/plain-night.js';
 import { nightView } from '../../support/night-view.js';
 
 describe('the night as plain lines', () => {
@@ -19,11 +21,26 @@ describe('the night as plain lines', () => {
   it('tells when a flag is taken back, and when a frame was reduced again', () => {
     const view = nightView();
     const frames = view.frames.map(frame => (frame.index === 3 ? { ...frame, rows: 12 } : frame));
-    const lines = newLines({ ...view, frames, shortlist: view.shortlist.slice(1) }, view);
-    expect(lines).toEqual([
+    const night = new PlainNight();
+    night.next(view);
+    expect(night.next({ ...view, frames, shortlist: view.shortlist.slice(1) })).toEqual([
       expect.stringContaining('field_004_V.csv: V, 12 rows'),
       '02:41 UT  cleared  NS-0501: no longer flagged',
     ]);
+  });
+
+  it('tells a problem that takes the place of another, and one that comes back only once', () => {
+    const half = makeProblem('row-width', safeText('v.csv'), 9, '2 cells where the header has 4');
+    const empty = makeProblem('empty-file', safeText('w.csv'), 0, 'no rows');
+    const night = new PlainNight();
+    const lines = (...problems: (typeof half)[]) =>
+      night
+        .next({ ...nightView(), problems })
+        .filter(line => line.includes('problem'))
+        .map(line => line.replace(/^.*problem {2}(\S+) (\S+) .*$/, '$1 $2'));
+    expect(lines(half)).toEqual(['v.csv:9: row-width']);
+    expect(lines(empty)).toEqual(['w.csv: empty-file']);
+    expect(lines(empty, half)).toEqual([]);
   });
 
   it('ends with totals and the shortlist', () => {
