@@ -6,6 +6,7 @@ import type { Profile } from '../follow/settings.js';
 import { Ephemeris } from '../follow/sky/ephemeris.js';
 import { clock, darkWords, nightOf, type Twilight } from '../follow/sky/night-of.js';
 import { BAND_COUNT } from '../science/bands.js';
+import { slabExtinction_AV } from '../science/dust-slab.js';
 import { collectingArea_cm2, countRate_ePerS } from '../science/photometry/count-rate.js';
 import { EXIT } from './exit-codes.js';
 import type { CommandIo } from './io.js';
@@ -44,8 +45,16 @@ function siteLines({ name, site, telescope, field }: Profile): string[] {
     `site       ${site.name}, ${latitude}, ${longitude}, ${site.height_m} m`,
     `telescope  ${telescope.aperture_m} m, collecting area ${area_m2.toFixed(3)} m2`,
     `limits     altitude ${site.minAltitude_deg} deg, airmass ${site.maxAirmass}, Sun below ${site.sunLimit_deg} deg, Moon at ${site.moonDistance_deg} deg`,
-    `field      ${field.name}, ${field.population}${Number.isNaN(field.modulus_mag) ? '' : `, modulus ${field.modulus_mag} mag`}, A_V ${field.extinction_AV} ± ${field.extinctionSigma_AV} mag`,
+    `field      ${field.name}, ${field.population}${Number.isNaN(field.modulus_mag) ? '' : `, modulus ${field.modulus_mag} mag`}, ${dustWords(field)}`,
   ];
+}
+
+function dustWords({ dust, extinction_AV, extinctionSigma_AV }: Profile['field']): string {
+  if (dust === undefined) return `A_V ${extinction_AV} ± ${extinctionSigma_AV} mag`;
+  const steps = [200, 1000, 5000].map(
+    distance_pc => `${slabExtinction_AV(dust, distance_pc).toFixed(2)} at ${distance_pc} pc`,
+  );
+  return `A_V ${steps.join(', ')}`;
 }
 
 /** Per band at the zenith, in the profile's seeing. */

@@ -24,9 +24,11 @@ export const OPEN_FIELD: FieldPrior = {
   age_Gyr: Number.NaN,
   extinction_AV: 0,
   extinctionSigma_AV: 0.02,
+  dust: undefined,
   lengthScale_pc: 1350,
   parallaxZeroPoint_mas: 0,
   floor_mag: 0.02,
+  bandFloor_mag: {},
   classScale: {},
 };
 

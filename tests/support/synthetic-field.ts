@@ -65,7 +65,7 @@ export function drawField(plan: FieldPlan, prior: FieldPrior): SyntheticField {
       random.normal(0, node.scatter_mag) - branchOf(node, random) + 5 * Math.log10(distance_pc) - 5;
     const seen = plan.bands.map(band => {
       const b = BAND_INDEX[band];
-      const own = random.normal(0, Math.hypot(node.bandScatter_mag, plan.sigma_mag, prior.floor_mag));
+      const own = random.normal(0, Math.hypot(node.bandScatter_mag[b], plan.sigma_mag, prior.floor_mag));
       return node.absMag[b] + common + av * node.extinctionRatio[b] + own;
     });
     const apparent = seen[plan.bands.indexOf(plan.selectedBy)];

@@ -156,11 +156,20 @@ function toProfile(file: ProfileFile): Profile {
       pmSigma_masPerYear: file.field.pm_sigma_mas_per_year,
       fieldPmSigma_masPerYear: file.field.field_pm_sigma_mas_per_year,
       age_Gyr: file.field.age_Gyr ?? Number.NaN,
-      extinction_AV: file.field.extinction_AV,
+      extinction_AV: file.field.extinction_AV ?? 0,
       extinctionSigma_AV: file.field.extinction_sigma_AV,
       lengthScale_pc: file.field.length_scale_pc,
       parallaxZeroPoint_mas: file.field.parallax_zero_point_mas,
+      dust: file.field.dust && {
+        extinction_AVPerKpc: file.field.dust.extinction_AV_per_kpc,
+        scaleHeight_pc: file.field.dust.scale_height_pc,
+        latitude_deg: file.field.dust.latitude_deg,
+        patchiness: file.field.dust.patchiness,
+      },
       floor_mag: file.field.floor_mag,
+      bandFloor_mag: Object.fromEntries(
+        file.band.flatMap(entry => (entry.floor_mag === undefined ? [] : [[entry.band, entry.floor_mag]])),
+      ),
       classScale: file.field.class_scale,
     },
     flags: Object.fromEntries(

@@ -33,6 +33,7 @@ const bandSettings = z.strictObject({
   throughput: between(0.001, 1),
   extinction_mag_per_airmass: between(0, 3),
   dark_sky_mag_per_arcsec2: between(5, 25),
+  floor_mag: between(0, 1).optional(),
 });
 
 const detector = {
@@ -68,6 +69,14 @@ const setup = z.discriminatedUnion('kind', [
   }),
 ]);
 
+/** Dust along the line of sight, where one value for the whole field would be wrong for the near stars. */
+const dust = z.strictObject({
+  latitude_deg: between(-90, 90),
+  extinction_AV_per_kpc: between(0, 10).default(0.8),
+  scale_height_pc: between(10, 1000).default(120),
+  patchiness: between(0, 2).default(0.4),
+});
+
 const field = z
   .strictObject({
     name: text.default('field'),
@@ -80,16 +89,21 @@ const field = z
     pm_sigma_mas_per_year: between(0.01, 100).default(0.5),
     field_pm_sigma_mas_per_year: between(0.1, 1000).default(8),
     age_Gyr: between(0.001, 14).optional(),
-    extinction_AV: between(0, 30).default(0),
+    extinction_AV: between(0, 30).optional(),
     extinction_sigma_AV: between(0, 10).default(0.05),
     length_scale_pc: between(10, 100_000).default(1350),
     parallax_zero_point_mas: between(-1, 1).default(0),
+    dust: dust.optional(),
     floor_mag: between(0, 1).default(0.02),
     class_scale: z.partialRecord(z.enum(CLASSES), positive).default({}),
   })
   .refine(value => value.member_share === 0 || value.modulus_mag !== undefined, {
     path: ['modulus_mag'],
     message: 'a distance modulus, since member_share says that there is a cluster',
+  })
+  .refine(value => value.dust === undefined || value.extinction_AV === undefined, {
+    path: ['extinction_AV'],
+    message: 'no extinction_AV beside [field.dust], which says how it grows with distance',
   });
 
 const flag = z.strictObject({

@@ -1,13 +1,16 @@
+import { fallingExponential } from '../falling-exponential.js';
 import { DistanceTerm } from './distance-term.js';
 import { hasCluster } from './field.js';
 import { FLAT_SCATTER_MAG2 } from './flat-class.js';
-import type { ClassModel, NoiseGroup } from './model.js';
+import type { ClassModel } from './model.js';
+import type { NoiseGroup } from './node-groups.js';
 import type { StarData } from './star-data.js';
 
 const MIN_COUNTS = 1e-30;
 /** No field star is too fast: high-velocity stars have a floor under their Gaussian. */
 const LEAST_MOTION = 1e-6;
 const TWO_PI = 2 * Math.PI;
+const MOST_BRANCHES = 8;
 
 /**
  * Weighs nodes by the distance they need: in the field by parallax and space density, in the cluster (where there is
@@ -24,6 +27,13 @@ export class JointDistance {
   private readonly isCluster: boolean;
   private readonly variances: Float64Array;
   private readonly range = new Float64Array(2);
+  /** What `weigh` found for the field in each branch. */
+  private readonly fieldParts = new Float64Array(MOST_BRANCHES);
+  private fieldScaleOfParts = 0;
+  /** Variance about a node's sequence: intrinsic and photometric. */
+  private spread = 0;
+  /** Any group of ordinary motion serves the flat class: its density is smooth. */
+  private readonly flatGroup: number;
   private fieldScale = 1;
   private clusterScale = 0;
   /** Offsets a node of each group may need at all. */
@@ -32,8 +42,9 @@ export class JointDistance {
 
   constructor(private readonly model: ClassModel) {
     this.isCluster = hasCluster(model.field);
-    this.variances = new Float64Array(model.scatterVariances_mag2.length);
-    this.term = new DistanceTerm(model.field.lengthScale_pc, this.variances.length);
+    this.variances = new Float64Array(model.distanceGroups.length);
+    this.term = new DistanceTerm(model.field.lengthScale_pc, model.distanceGroups);
+    this.flatGroup = model.distanceGroups.findIndex(group => group.kinematics === 'disc');
     this.lowest = new Float64Array(model.groups.length);
     this.highest = new Float64Array(model.groups.length);
   }
@@ -42,54 +53,66 @@ export class JointDistance {
   prepare(star: StarData, limit_chi2: number): void {
     const photometric = star.offsetVariance_mag2();
     for (let g = 0; g < this.variances.length; g++) {
-      this.variances[g] = this.model.scatterVariances_mag2[g] + photometric;
+      this.variances[g] = this.model.distanceGroups[g].scatterVariance_mag2 + photometric;
     }
-    this.term.prepare(star.parallax_mas, star.parallaxSigma_mas, this.variances);
+    // In a cluster field the motion has another use: it tells members.
+    const motion = this.isCluster ? Number.NaN : Math.hypot(star.pmRa_masPerYear, star.pmDec_masPerYear);
+    this.term.prepare(star.parallax_mas, star.parallaxSigma_mas, motion, this.variances);
     this.prepareScales(star);
     this.prepareRanges(limit_chi2);
   }
 
-  /** Finds `density` and `members` for a node; false when the distance rules it out. */
-  weigh(group: NoiseGroup, k: number, x: number, variance: number, limit_chi2: number): boolean {
-    const spread = group.scatterVariance_mag2 + variance;
+  /**
+   * Finds `density` and `members` for a node that needs the offset x with a misfit chi2 in its colours, the misfit
+   * included; false when colours and distance together rule it out.
+   */
+  weigh(
+    group: NoiseGroup,
+    k: number,
+    x: number,
+    variance: number,
+    chi2: number,
+    limit_chi2: number,
+  ): boolean {
     const inField = this.model.fieldDensity[k] * this.fieldScale;
     const inCluster = this.model.clusterDensity[k] * this.clusterScale;
-    let density = 0;
-    let members = 0;
-    for (const { share, brighter_mag } of group.branches) {
-      const offset = x + brighter_mag;
-      density += share * inField * this.term.densityAt(offset, spread, group.scatterGroup, limit_chi2);
-      if (inCluster > 0) members += share * inCluster * this.clusterDensityAt(offset, spread, limit_chi2);
-    }
-    this.density = density + members;
-    this.members = members;
+    this.spread = this.model.distanceGroups[group.distanceGroup].scatterVariance_mag2 + variance;
+    const field = this.term.isGaussian
+      ? inField * this.weighGaussian(group, x, chi2, limit_chi2)
+      : inField * this.weighGrid(group, x, chi2);
+    this.fieldScaleOfParts = inField;
+    this.members = inCluster > 0 ? inCluster * this.weighCluster(group, x, chi2, limit_chi2) : 0;
+    this.density = field + this.members;
     return this.density > 0;
   }
 
-  /** Finds the modulus of a node that `weigh` has let through. */
-  findModulus(group: NoiseGroup, k: number, x: number, variance: number, limit_chi2: number): void {
-    const { modulus_mag, modulusSigma_mag } = this.model.field;
-    const spread = group.scatterVariance_mag2 + variance;
-    const inField = this.model.fieldDensity[k] * this.fieldScale;
-    const inCluster = this.model.clusterDensity[k] * this.clusterScale;
-    let total = 0;
+  /** Finds the modulus of the node that `weigh` has just let through. */
+  findModulus(group: NoiseGroup, x: number): void {
+    const { term, fieldParts, fieldScaleOfParts, members } = this;
+    const { branches, distanceGroup } = group;
+    let total = members;
     let first = 0;
     let second = 0;
-    for (const { share, brighter_mag } of group.branches) {
-      const offset = x + brighter_mag;
-      const weight = share * inField * this.term.densityAt(offset, spread, group.scatterGroup, limit_chi2);
-      if (weight > 0) {
-        this.term.momentsAt(offset, spread, group.scatterGroup);
-        const mean = this.term.modulusMean_mag;
-        total += weight;
-        first += weight * mean;
-        second += weight * (this.term.modulusVariance_mag2 + mean * mean);
+    if (members > 0) {
+      const { modulus_mag, modulusSigma_mag } = this.model.field;
+      first = members * modulus_mag;
+      second = members * (modulusSigma_mag * modulusSigma_mag + modulus_mag * modulus_mag);
+    }
+    const gain = term.isGaussian ? term.variance_mag2 / (term.variance_mag2 + this.spread) : 0;
+    for (let b = 0; b < branches.length; b++) {
+      const weight = fieldScaleOfParts * fieldParts[b];
+      if (!(weight > 0)) continue;
+      const offset = x + branches[b].brighter_mag;
+      let mean = term.mean_mag + gain * (offset - term.mean_mag);
+      let variance = term.variance_mag2 * (1 - gain);
+      if (!term.isGaussian) {
+        term.momentsAt(offset, distanceGroup);
+        mean = term.modulusMean_mag;
+        variance = term.modulusVariance_mag2;
       }
-      if (inCluster === 0) continue;
-      const member = share * inCluster * this.clusterDensityAt(offset, spread, limit_chi2);
-      total += member;
-      first += member * modulus_mag;
-      second += member * (modulusSigma_mag * modulusSigma_mag + modulus_mag * modulus_mag);
+      total += weight;
+      first += weight * mean;
+      second += weight * (variance + mean * mean);
     }
     this.modulus_mag = first / total;
     this.modulusVariance_mag2 = Math.max(0, second / total - this.modulus_mag ** 2);
@@ -97,22 +120,68 @@ export class JointDistance {
 
   /** Density of the field alone at an offset of the flat class; leaves the modulus in the public fields. */
   weighFlat(x: number, limit_chi2: number): number {
-    // Any scatter group's table serves: the density of 'none' is smooth.
-    const group = this.variances.length - 1;
-    const density = this.fieldScale * this.term.densityAt(x, FLAT_SCATTER_MAG2, group, limit_chi2);
-    if (density <= 0) return 0;
-    this.term.momentsAt(x, FLAT_SCATTER_MAG2, group);
-    this.modulus_mag = this.term.modulusMean_mag;
-    this.modulusVariance_mag2 = this.term.modulusVariance_mag2;
-    return density;
+    const { term, flatGroup } = this;
+    if (!term.isGaussian) {
+      const density = this.fieldScale * term.densityAt(x, flatGroup);
+      if (density <= 0) return 0;
+      term.momentsAt(x, flatGroup);
+      this.modulus_mag = term.modulusMean_mag;
+      this.modulusVariance_mag2 = term.modulusVariance_mag2;
+      return density;
+    }
+    const total = term.variance_mag2 + FLAT_SCATTER_MAG2;
+    const difference = x - term.mean_mag;
+    const misfit = (difference * difference) / total;
+    if (misfit > limit_chi2) return 0;
+    const gain = term.variance_mag2 / total;
+    this.modulus_mag = term.mean_mag + gain * difference;
+    this.modulusVariance_mag2 = term.variance_mag2 * (1 - gain);
+    return (this.fieldScale * term.weight * fallingExponential(0.5 * misfit)) / Math.sqrt(TWO_PI * total);
   }
 
-  private clusterDensityAt(offset: number, spread: number, limit_chi2: number): number {
+  /** Sum over the branches against a Gaussian modulus. */
+  private weighGaussian(group: NoiseGroup, x: number, chi2: number, limit_chi2: number): number {
+    const { term, fieldParts } = this;
+    const { branches } = group;
+    const precision = 1 / (term.variance_mag2 + this.spread);
+    const scale = term.weight * Math.sqrt(precision / TWO_PI);
+    const difference = x - term.mean_mag;
+    let sum = 0;
+    for (let b = 0; b < branches.length; b++) {
+      const { share, brighter_mag } = branches[b];
+      const misfit = chi2 + (difference + brighter_mag) ** 2 * precision;
+      const part = misfit > limit_chi2 ? 0 : share * scale * fallingExponential(0.5 * misfit);
+      fieldParts[b] = part;
+      sum += part;
+    }
+    return sum;
+  }
+
+  /** Sum over the branches against the tabulated modulus. */
+  private weighGrid(group: NoiseGroup, x: number, chi2: number): number {
+    const { term, fieldParts } = this;
+    const { branches, distanceGroup } = group;
+    const likelihood = fallingExponential(0.5 * chi2);
+    let sum = 0;
+    for (let b = 0; b < branches.length; b++) {
+      const { share, brighter_mag } = branches[b];
+      const part = share * likelihood * term.densityAt(x + brighter_mag, distanceGroup);
+      fieldParts[b] = part;
+      sum += part;
+    }
+    return sum;
+  }
+
+  /** Sum over the branches against the modulus of the cluster. */
+  private weighCluster(group: NoiseGroup, x: number, chi2: number, limit_chi2: number): number {
     const { modulus_mag, modulusSigma_mag } = this.model.field;
-    const total = spread + modulusSigma_mag * modulusSigma_mag;
-    const difference = offset - modulus_mag;
-    const misfit = (difference * difference) / total;
-    return misfit > limit_chi2 ? 0 : Math.exp(-0.5 * misfit) / Math.sqrt(TWO_PI * total);
+    const precision = 1 / (this.spread + modulusSigma_mag * modulusSigma_mag);
+    let sum = 0;
+    for (const { share, brighter_mag } of group.branches) {
+      const misfit = chi2 + (x + brighter_mag - modulus_mag) ** 2 * precision;
+      if (misfit <= limit_chi2) sum += share * fallingExponential(0.5 * misfit);
+    }
+    return sum * Math.sqrt(precision / TWO_PI);
   }
 
   /** Both populations in units of their numbers at the star's magnitude, the cluster with its parallax. */
@@ -151,7 +220,7 @@ export class JointDistance {
     const { groups, field } = this.model;
     for (let g = 0; g < groups.length; g++) {
       const group = groups[g];
-      const variance = this.variances[group.scatterGroup];
+      const variance = this.variances[group.distanceGroup];
       this.term.range(variance, limit_chi2, this.range);
       let low = this.range[0];
       let high = this.range[1];

@@ -1,3 +1,4 @@
+import type { ExtinctionPrior } from './extinction-prior.js';
 import type { FieldPrior } from './field.js';
 import type { Node } from './nodes.js';
 
@@ -9,9 +10,14 @@ export function magnitudeCounts(setting: {
   readonly nodes: readonly Node[];
   readonly band: number;
   readonly field: FieldPrior;
+  readonly extinction: ExtinctionPrior;
 }) {
-  const { nodes, band, field } = setting;
-  const extinguished = (node: Node) => node.absMag[band] + field.extinction_AV * node.extinctionRatio[band];
+  const { nodes, band, field, extinction } = setting;
+  /** True distance modulus at which a node shows a magnitude. */
+  const modulusAt = (node: Node, mag: number) => {
+    const apparent_mag = mag - node.absMag[band];
+    return apparent_mag - node.extinctionRatio[band] * extinction.atApparentModulus(apparent_mag);
+  };
 
   const tabulate = (contribution: (node: Node, mag: number) => number, densities: Float64Array) => {
     const table = new Float64Array(COUNT);
@@ -32,11 +38,11 @@ export function magnitudeCounts(setting: {
 
   return {
     inField: (densities: Float64Array) =>
-      tabulate((node, mag) => shellDensity(mag - extinguished(node), field.lengthScale_pc), densities),
+      tabulate((node, mag) => shellDensity(modulusAt(node, mag), field.lengthScale_pc), densities),
     inCluster: (densities: Float64Array) =>
       tabulate((node, mag) => {
         const variance = node.scatter_mag ** 2 + field.modulusSigma_mag ** 2;
-        const difference = mag - extinguished(node) - field.modulus_mag;
+        const difference = modulusAt(node, mag) - field.modulus_mag;
         return Math.exp((-0.5 * difference ** 2) / variance) / Math.sqrt(2 * Math.PI * variance);
       }, densities),
   };

@@ -1,31 +1,18 @@
 import { BAND_COUNT, BAND_INDEX, type Band, type Colour } from '../bands.js';
 import { readTracks } from '../tracks/index.js';
 import type { Track } from '../tracks/track.js';
+import { ExtinctionPrior } from './extinction-prior.js';
 import { type FieldPrior, hasCluster } from './field.js';
 import { FlatClass } from './flat-class.js';
 import { magnitudeCounts } from './magnitude-counts.js';
-import { type Branch, makeNodes, type Node } from './nodes.js';
+import { type DistanceGroup, groupNodes, type NoiseGroup } from './node-groups.js';
+import { makeNodes, type Node } from './nodes.js';
 import { populationDensities } from './populations.js';
 
 /** Axes of the HR diagram: a colour and the band of the absolute magnitude. */
 export interface DiagramAxes {
   readonly colour: Colour;
   readonly band: Band;
-}
-
-/** Nodes that share their scatter: a run of places in the node columns, sorted by colour. */
-export interface NoiseGroup {
-  readonly first: number;
-  /** Up to here the colour in the axes is not known. */
-  readonly silentEnd: number;
-  readonly end: number;
-  readonly scatterVariance_mag2: number;
-  readonly bandVariance_mag2: number;
-  readonly scatterGroup: number;
-  readonly branches: readonly Branch[];
-  /** Largest and smallest brighter_mag of the branches. */
-  readonly brightest_mag: number;
-  readonly faintest_mag: number;
 }
 
 /**
@@ -35,17 +22,23 @@ export interface NoiseGroup {
 export interface ClassModel {
   readonly axes: DiagramAxes;
   readonly field: FieldPrior;
+  readonly extinction: ExtinctionPrior;
   readonly tracks: readonly Track[];
   readonly nodes: readonly Node[];
   readonly groups: readonly NoiseGroup[];
+  readonly distanceGroups: readonly DistanceGroup[];
   /** Intrinsic colour of each node in the axes; NaN first, then rising, within each group. */
   readonly colours: Float64Array;
+  /** Largest reddening of the axes' colour for each magnitude of A_V. */
+  readonly largestReddening: number;
   /** One column over the nodes for each band, in the order of BANDS. */
   readonly absMag: readonly Float64Array[];
   readonly extinctionRatio: readonly Float64Array[];
+  /** Bolometric magnitude where the table gives a correction. */
+  readonly bolometricMag: Float64Array;
   readonly classIndex: Uint8Array;
-  /** Distinct intrinsic scatters, mag^2. */
-  readonly scatterVariances_mag2: readonly number[];
+  readonly subtype: Float64Array;
+  readonly teff_K: Float64Array;
   readonly fieldDensity: Float64Array;
   readonly clusterDensity: Float64Array;
   readonly flat: FlatClass;
@@ -60,36 +53,40 @@ export interface ClassModel {
  */
 export function buildModel(field: FieldPrior, axes: DiagramAxes, bands: readonly Band[]): ClassModel {
   const tracks = readTracks();
-  const { nodes, groups, colours, scatterVariances_mag2 } = arrange(
+  const { nodes, groups, distanceGroups, colours } = groupNodes(
     makeNodes(tracks, coloursOf(axes, bands)),
-    axes,
+    axes.colour,
   );
   const columns = (of: (node: Node) => Float64Array) =>
     Array.from({ length: BAND_COUNT }, (_, band) => Float64Array.from(nodes, node => of(node)[band]));
+  const column = (of: (node: Node) => number) => Float64Array.from(nodes, of);
   const cluster = hasCluster(field);
   // Around a cluster lies the ordinary field; without one the population is the field's own.
   const fieldDensity = populationDensities(nodes, cluster ? 'field' : field.population, field);
   const clusterDensity = cluster
     ? populationDensities(nodes, field.population, field)
     : new Float64Array(nodes.length);
-  const absMag = columns(node => node.absMag);
-  const extinctionRatio = columns(node => node.extinctionRatio);
-  const flat = new FlatClass(nodes, fieldDensity);
-  const counts = magnitudeCounts({ nodes, band: BAND_INDEX[axes.band], field });
+  const extinction = new ExtinctionPrior(field);
+  const counts = magnitudeCounts({ nodes, band: BAND_INDEX[axes.band], field, extinction });
   return {
     axes,
     field,
+    extinction,
     tracks,
     nodes,
     groups,
+    distanceGroups,
     colours,
-    absMag,
-    extinctionRatio,
+    largestReddening: Math.max(...nodes.map(node => reddeningOf(node, axes.colour))),
+    absMag: columns(node => node.absMag),
+    extinctionRatio: columns(node => node.extinctionRatio),
+    bolometricMag: column(node => node.absMag[BAND_INDEX.V] + node.bolometricCorrection_V),
     classIndex: Uint8Array.from(nodes, node => node.classIndex),
-    scatterVariances_mag2,
+    subtype: column(node => node.subtype),
+    teff_K: column(node => node.teff_K),
     fieldDensity,
     clusterDensity,
-    flat,
+    flat: new FlatClass(nodes, fieldDensity),
     fieldCounts: counts.inField(fieldDensity),
     clusterCounts: counts.inCluster(clusterDensity),
   };
@@ -103,38 +100,6 @@ function coloursOf({ colour }: DiagramAxes, bands: readonly Band[]): readonly Co
   ];
 }
 
-/** Sorted by noise group, then by colour, so that a star meets only the nodes near its colour. */
-function arrange(unsorted: readonly Node[], axes: DiagramAxes) {
-  const colourOf = (node: Node) =>
-    node.absMag[BAND_INDEX[axes.colour.blue]] - node.absMag[BAND_INDEX[axes.colour.red]];
-  const scatters = [...new Set(unsorted.map(node => node.scatter_mag))].sort((a, b) => a - b);
-  const byKey = new Map<string, Node[]>();
-  for (const node of unsorted) {
-    const key = `${node.scatter_mag} ${node.bandScatter_mag} ${node.branches.map(branch => branch.brighter_mag)}`;
-    const members = byKey.get(key) ?? [];
-    members.push(node);
-    byKey.set(key, members);
-  }
-  const nodes: Node[] = [];
-  const groups: NoiseGroup[] = [];
-  for (const members of byKey.values()) {
-    const silent = members.filter(node => Number.isNaN(colourOf(node)));
-    const known = members.filter(node => !Number.isNaN(colourOf(node)));
-    known.sort((a, b) => colourOf(a) - colourOf(b));
-    const [first] = members;
-    groups.push({
-      first: nodes.length,
-      silentEnd: nodes.length + silent.length,
-      end: nodes.length + members.length,
-      scatterVariance_mag2: first.scatter_mag ** 2,
-      bandVariance_mag2: first.bandScatter_mag ** 2,
-      scatterGroup: scatters.indexOf(first.scatter_mag),
-      branches: first.branches,
-      brightest_mag: Math.max(...first.branches.map(branch => branch.brighter_mag)),
-      faintest_mag: Math.min(...first.branches.map(branch => branch.brighter_mag)),
-    });
-    nodes.push(...silent, ...known);
-  }
-  const colours = Float64Array.from(nodes, colourOf);
-  return { nodes, groups, colours, scatterVariances_mag2: scatters.map(scatter => scatter ** 2) };
+function reddeningOf({ extinctionRatio }: Node, { blue, red }: Colour): number {
+  return extinctionRatio[BAND_INDEX[blue]] - extinctionRatio[BAND_INDEX[red]];
 }

@@ -1,6 +1,7 @@
 import { BAND_COUNT, BAND_INDEX, BANDS, type Colour } from '../bands.js';
 import { CLASS_INDEX, type StarClass } from '../classes.js';
 import { ExtinctionLaw } from '../extinction.js';
+import type { Kinematics } from '../tangential-velocity.js';
 import { SUBDWARF_FEH, subdwarfOffset_mag } from '../tracks/subdwarfs.js';
 import type { Track, TrackPoint } from '../tracks/track.js';
 import {
@@ -25,18 +26,21 @@ export interface Node {
   readonly extinctionRatio: Float64Array;
   /** Stars of this kind per cubic parsec near the Sun. */
   readonly density_perPc3: number;
-  /** Intrinsic scatter in M common to all bands, and in each band on its own. */
+  /** Intrinsic scatter in M common to all bands, and in each band on its own: laid out as BANDS. */
   readonly scatter_mag: number;
-  readonly bandScatter_mag: number;
+  readonly bandScatter_mag: readonly number[];
+  readonly kinematics: Kinematics;
   /** Sequences beside this one, of the same colours. */
   readonly branches: readonly Branch[];
 }
 
 /** Nodes lie closer than the photometric floor in colour, and well inside the scatter in magnitude. */
-const COLOUR_STEP_MAG = 0.02;
-const MAGNITUDE_STEP_MAG = 0.15;
+const COLOUR_STEP_MAG = 0.035;
+const MAGNITUDE_STEP_MAG = 0.25;
 /** Interior gaps of a column are bridged when they are no wider than this many subtypes. */
 const WIDEST_GAP_SUBTYPES = 10;
+
+type ModelledClass = Exclude<StarClass, 'none'>;
 
 interface Scatter {
   readonly magnitude_mag: number;
@@ -48,7 +52,7 @@ interface Scatter {
  * giants 0.7, II and I 0.7-1; white dwarfs spread by their masses about log g 8. Colour scatter: judgement,
  * from the precision the tables claim (0.01-0.03 mag) and the spread of metallicities.
  */
-const SCATTER: Readonly<Record<Exclude<StarClass, 'none'>, Scatter>> = {
+const SCATTER: Readonly<Record<ModelledClass, Scatter>> = {
   V: { magnitude_mag: 0.3, band_mag: 0.025 },
   IV: { magnitude_mag: 0.45, band_mag: 0.03 },
   III: { magnitude_mag: 0.65, band_mag: 0.03 },
@@ -105,14 +109,28 @@ export function makeNodes(tracks: readonly Track[], colours = USUAL_COLOURS): re
   const law = new ExtinctionLaw();
   return tracks.flatMap(track => {
     const samples = resample(bridgeGaps(track.points), colours);
-    return samples.map(({ point, step_mag, step_subtypes }) =>
-      makeNode(track, point, densityOf(track, point, step_mag, step_subtypes, samples.length), law),
-    );
+    const bandScatter_mag = bandScatterOf(track);
+    return samples.map(({ point, step_mag, step_subtypes }) => {
+      const density_perPc3 = densityOf(track, point, step_mag, step_subtypes, samples.length);
+      return makeNode(track, point, density_perPc3, bandScatter_mag, law);
+    });
   });
 }
 
-function makeNode(track: Track, point: TrackPoint, density_perPc3: number, law: ExtinctionLaw): Node {
-  const starClass = track.starClass as Exclude<StarClass, 'none'>;
+/** Colour scatter of the class, together with that of the transformation a band was filled by. */
+function bandScatterOf(track: Track): readonly number[] {
+  const { band_mag } = SCATTER[track.starClass as ModelledClass];
+  return Array.from(track.fillSigma_mag, sigma => Math.hypot(band_mag, sigma));
+}
+
+function makeNode(
+  track: Track,
+  point: TrackPoint,
+  density_perPc3: number,
+  bandScatter_mag: readonly number[],
+  law: ExtinctionLaw,
+): Node {
+  const starClass = track.starClass as ModelledClass;
   const bpRp = point.absMag[BAND_INDEX.BP] - point.absMag[BAND_INDEX.RP];
   return {
     classIndex: CLASS_INDEX[starClass],
@@ -124,7 +142,8 @@ function makeNode(track: Track, point: TrackPoint, density_perPc3: number, law: 
     extinctionRatio: Float64Array.from(BANDS, band => law.ratio(band, bpRp)),
     density_perPc3,
     scatter_mag: SCATTER[starClass].magnitude_mag,
-    bandScatter_mag: SCATTER[starClass].band_mag,
+    bandScatter_mag,
+    kinematics: starClass === 'sd' ? 'metal-poor' : 'disc',
     branches: BRANCHES[starClass] ?? SINGLE,
   };
 }

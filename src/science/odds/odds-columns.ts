@@ -10,6 +10,9 @@ export interface OddsColumns {
   readonly subtypeSigma: Float32Array;
   readonly teff_K: Float32Array;
   readonly teffSigma_K: Float32Array;
+  /** Bolometric luminosity in the logarithm (decimal, Suns) along the most probable class. */
+  readonly logLuminosity: Float32Array;
+  readonly logLuminositySigma: Float32Array;
   /** Absolute magnitude in the model's axes.band. */
   readonly absMag: Float32Array;
   readonly absMagSigma: Float32Array;
@@ -30,6 +33,8 @@ export function makeOddsColumns(capacity: number): OddsColumns {
     subtypeSigma: column(),
     teff_K: column(),
     teffSigma_K: column(),
+    logLuminosity: column(),
+    logLuminositySigma: column(),
     absMag: column(),
     absMagSigma: column(),
     modulus_mag: column(),

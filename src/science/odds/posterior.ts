@@ -1,5 +1,6 @@
 import { BAND_COUNT, BAND_INDEX, BANDS, type Band } from '../bands.js';
 import { CLASSES, type StarClass } from '../classes.js';
+import { floorOf } from './field.js';
 import type { ClassModel } from './model.js';
 import { StarFit } from './star-fit.js';
 import type { StarInputs } from './star-inputs.js';
@@ -62,7 +63,7 @@ export class PosteriorReader {
         model.absMag[index][node] +
         fit.offset_mag[slot] +
         fit.extinction_AV[slot] * model.extinctionRatio[index][node];
-      const error = Math.hypot(inputs.sigma_mag[b][i], model.field.floor_mag, bandScatter_mag);
+      const error = Math.hypot(inputs.sigma_mag[b][i], floorOf(model.field, band), bandScatter_mag[index]);
       const sigma = (inputs.mag[b][i] - predicted) / error;
       return Number.isNaN(sigma) ? [] : [{ band, sigma }];
     });
@@ -94,7 +95,7 @@ function predictMagnitudes(
     const observed = inputs.bands.indexOf(BANDS[band]);
     if (observed >= 0 && !Number.isNaN(inputs.mag[observed][i])) {
       mag[band] = inputs.mag[observed][i];
-      sigma_mag[band] = Math.hypot(inputs.sigma_mag[observed][i], model.field.floor_mag);
+      sigma_mag[band] = Math.hypot(inputs.sigma_mag[observed][i], floorOf(model.field, BANDS[band]));
       continue;
     }
     let weight = 0;
@@ -108,13 +109,13 @@ function predictMagnitudes(
       const m = absMag + fit.offset_mag[slot] + fit.extinction_AV[slot] * model.extinctionRatio[band][node];
       weight += w;
       sum += w * m;
-      sum2 += w * (m * m + model.nodes[node].bandScatter_mag ** 2);
+      sum2 += w * (m * m + model.nodes[node].bandScatter_mag[band] ** 2);
     }
     if (weight < LEAST_WEIGHT) continue;
     mag[band] = sum / weight;
     sigma_mag[band] = Math.hypot(
       Math.sqrt(Math.max(0, sum2 / weight - mag[band] ** 2)),
-      model.field.floor_mag,
+      floorOf(model.field, BANDS[band]),
     );
   }
   return { mag, sigma_mag };

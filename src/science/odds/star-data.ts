@@ -1,4 +1,6 @@
 import { BAND_INDEX, type Band } from '../bands.js';
+import { isGoodParallax } from './distance-term.js';
+import { floorOf } from './field.js';
 import type { ClassModel } from './model.js';
 import type { StarInputs } from './star-inputs.js';
 
@@ -12,8 +14,10 @@ const STAR_AV_FLOOR = 0.05;
 export class StarData {
   /** Number of usable magnitudes; the arrays by slot hold so many. */
   used = 0;
-  readonly bands: Uint8Array;
   readonly mags: Float64Array;
+  /** The nodes' absolute magnitudes and A_band / A_V in the band of each slot. */
+  readonly nodeMags: Float64Array[];
+  readonly nodeRatios: Float64Array[];
   /** Slot of the band of the axes, else the first. */
   referenceSlot = 0;
   /** Slots of the two bands of the axes' colour, -1 where one is missing. */
@@ -23,32 +27,39 @@ export class StarData {
   readonly weights: Float64Array;
   readonly weightProduct: Float64Array;
   readonly stride: number;
+  /** True where the prior on A_V is to be looked up node by node, by the distance the node needs. */
+  extinctionByNode = false;
   priorAV = 0;
   priorAVVariance = 0;
   parallax_mas = Number.NaN;
   parallaxSigma_mas = Number.NaN;
   pmRa_masPerYear = Number.NaN;
   pmDec_masPerYear = Number.NaN;
+  private readonly floors2: Float64Array;
+  private readonly bandIndices: readonly number[];
 
   constructor(
     private readonly model: ClassModel,
     private readonly inputs: StarInputs,
   ) {
     this.stride = inputs.bands.length;
-    this.bands = new Uint8Array(this.stride);
     this.mags = new Float64Array(this.stride);
+    this.nodeMags = inputs.bands.map(band => model.absMag[BAND_INDEX[band]]);
+    this.nodeRatios = inputs.bands.map(band => model.extinctionRatio[BAND_INDEX[band]]);
     this.weights = new Float64Array(model.groups.length * this.stride);
     this.weightProduct = new Float64Array(model.groups.length);
+    this.floors2 = Float64Array.from(inputs.bands, band => floorOf(model.field, band) ** 2);
+    this.bandIndices = inputs.bands.map(band => BAND_INDEX[band]);
   }
 
   /** Takes star i of the inputs. */
   take(i: number): void {
     this.takeMagnitudes(i);
-    this.takeExtinction(i);
     this.parallax_mas = this.inputs.parallax_mas[i] - this.model.field.parallaxZeroPoint_mas;
     this.parallaxSigma_mas = this.inputs.parallaxSigma_mas[i];
     this.pmRa_masPerYear = this.inputs.pmRa_masPerYear[i];
     this.pmDec_masPerYear = this.inputs.pmDec_masPerYear[i];
+    this.takeExtinction(i);
   }
 
   get hasParallax(): boolean {
@@ -64,24 +75,25 @@ export class StarData {
 
   private takeMagnitudes(i: number): void {
     const { bands, mag, sigma_mag } = this.inputs;
-    const { groups, field, axes } = this.model;
+    const { groups, axes } = this.model;
     this.used = 0;
     this.referenceSlot = 0;
     this.blueSlot = -1;
     this.redSlot = -1;
     this.weightProduct.fill(1);
-    const floor2 = field.floor_mag ** 2;
     for (let b = 0; b < this.stride; b++) {
       const m = mag[b][i];
       const sigma = sigma_mag[b][i];
       if (!(m > -30 && m < 40) || !(sigma >= 0)) continue;
       const slot = this.used++;
-      this.bands[slot] = BAND_INDEX[bands[b]];
+      const index = this.bandIndices[b];
+      this.nodeMags[slot] = this.model.absMag[index];
+      this.nodeRatios[slot] = this.model.extinctionRatio[index];
       this.mags[slot] = m;
       this.noteSlot(bands[b], slot, axes);
-      const variance = sigma * sigma + floor2;
+      const variance = sigma * sigma + this.floors2[b];
       for (let g = 0; g < groups.length; g++) {
-        const weight = 1 / (variance + groups[g].bandVariance_mag2);
+        const weight = 1 / (variance + groups[g].bandVariance_mag2[index]);
         this.weights[g * this.stride + slot] = weight;
         this.weightProduct[g] *= weight;
       }
@@ -94,15 +106,20 @@ export class StarData {
     if (band === axes.colour.red) this.redSlot = slot;
   }
 
+  /** Its own E(B-V) where the table has one; else the field's, at the star's distance where that is well known. */
   private takeExtinction(i: number): void {
-    const { field } = this.model;
+    const { extinction } = this.model;
     const reddening = this.inputs.reddening_EBV[i];
-    if (Number.isNaN(reddening)) {
-      this.priorAV = field.extinction_AV;
-      this.priorAVVariance = field.extinctionSigma_AV ** 2;
-    } else {
+    const hasOwn = !Number.isNaN(reddening);
+    const hasGoodParallax = isGoodParallax(this.parallax_mas, this.parallaxSigma_mas);
+    this.extinctionByNode = !hasOwn && extinction.growsWithDistance && !hasGoodParallax;
+    if (hasOwn) {
       this.priorAV = R_V * Math.max(0, reddening);
       this.priorAVVariance = Math.max(STAR_AV_FLOOR, STAR_AV_ERROR * this.priorAV) ** 2;
+      return;
     }
+    const modulus_mag = 10 - 5 * Math.log10(this.parallax_mas);
+    this.priorAV = this.extinctionByNode ? extinction.most_AV : extinction.atModulus(modulus_mag);
+    this.priorAVVariance = extinction.variance(this.priorAV);
   }
 }

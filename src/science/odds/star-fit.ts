@@ -1,8 +1,10 @@
 import { BAND_COUNT } from '../bands.js';
 import { CLASS_COUNT, CLASS_INDEX } from '../classes.js';
+import { fallingExponential } from '../falling-exponential.js';
 import { FLAT_COLOUR_PER_MAG } from './flat-class.js';
 import { JointDistance } from './joint-distance.js';
-import type { ClassModel, NoiseGroup } from './model.js';
+import type { ClassModel } from './model.js';
+import type { NoiseGroup } from './node-groups.js';
 import { StarData } from './star-data.js';
 import type { StarInputs } from './star-inputs.js';
 
@@ -14,8 +16,8 @@ const JOINT_LIMIT_CHI2 = 40;
 const NEGLIGIBLE = 1e-6;
 /** An offset is stretched by less than this many sigma of the extinction prior. */
 const EXTINCTION_SLACK_SIGMA = 7;
-/** No colour changes by more than this per magnitude of A_V (U-yP1: 1.2; a colour of the axes: far less). */
-const LARGEST_REDDENING = 1.2;
+/** No band is dimmed by more than this per magnitude of A_V (U: 1.6). */
+const LARGEST_RATIO = 1.6;
 /** (2 pi)^(-n/2) for n colours. */
 const COLOUR_NORM = Float64Array.from({ length: BAND_COUNT }, (_, n) => (2 * Math.PI) ** (-n / 2));
 /** Density of n colours under the flat class. */
@@ -47,6 +49,8 @@ export class StarFit {
   /** Moments of the flat class, weighted by its odds. */
   flatModulus_mag = 0;
   flatModulusVariance_mag2 = 0;
+  flatExtinction_AV = 0;
+  flatExtinctionVariance = 0;
 
   private readonly star: StarData;
   private readonly distance: JointDistance;
@@ -86,7 +90,7 @@ export class StarFit {
   /** Goes through the nodes near the star's colour, and those whose colour in the axes is not known. */
   private fitNodes(): number {
     const { star } = this;
-    const { groups, colours } = this.model;
+    const { groups, colours, largestReddening } = this.model;
     const { blueSlot, redSlot } = star;
     let total = 0;
     for (let g = 0; g < groups.length; g++) {
@@ -99,10 +103,10 @@ export class StarFit {
       const variance =
         1 / star.weights[g * star.stride + blueSlot] + 1 / star.weights[g * star.stride + redSlot];
       const reach = Math.sqrt(
-        MISFIT_LIMIT_CHI2 * (variance + star.priorAVVariance * LARGEST_REDDENING * LARGEST_REDDENING),
+        MISFIT_LIMIT_CHI2 * (variance + star.priorAVVariance * largestReddening * largestReddening),
       );
       const colour = star.mags[blueSlot] - star.mags[redSlot];
-      const bluest = colour - star.priorAV * LARGEST_REDDENING - reach;
+      const bluest = colour - star.priorAV * largestReddening - reach;
       const from = firstAtLeast(colours, bluest, group.silentEnd, group.end);
       const to = firstAtLeast(colours, colour + reach, from, group.end);
       total += this.fitRange(g, group.first, group.silentEnd) + this.fitRange(g, from, to);
@@ -113,22 +117,25 @@ export class StarFit {
   /** Fits the nodes of one noise group from one place to another; returns their weight, not yet normalised. */
   private fitRange(g: number, from: number, to: number): number {
     const { model, star, distance } = this;
-    const { used, bands, mags, weights, priorAV, priorAVVariance } = star;
-    const { absMag, extinctionRatio } = model;
+    const { used, mags, nodeMags, nodeRatios, weights, extinctionByNode } = star;
     const group = model.groups[g];
     const firstWeight = g * star.stride;
-    const referenceMags = absMag[bands[star.referenceSlot]];
-    const brightness = mags[star.referenceSlot] - priorAV;
+    const referenceMags = nodeMags[star.referenceSlot];
+    const brightness = mags[star.referenceSlot];
     // Room for the part of the offset that the extinction takes.
-    const slack = priorAV + EXTINCTION_SLACK_SIGMA * Math.sqrt(priorAVVariance);
+    const slack = EXTINCTION_SLACK_SIGMA * Math.sqrt(star.priorAVVariance);
     const lowest = distance.lowest[g] - slack;
-    const highest = distance.highest[g] + slack;
-    const priorPrecision = priorAVVariance > 0 ? 1 / priorAVVariance : 0;
+    const highest = distance.highest[g] + LARGEST_RATIO * (star.priorAV + slack);
+    let { priorAV, priorAVVariance } = star;
     let total = 0;
     for (let k = from; k < to; k++) {
       // Far too near or too far, whatever the colours say; an unknown magnitude passes.
       const offset = brightness - referenceMags[k];
       if (offset < lowest || offset > highest) continue;
+      if (extinctionByNode) {
+        priorAV = model.extinction.atApparentModulus(offset);
+        priorAVVariance = model.extinction.variance(priorAV);
+      }
       let s0 = 0;
       let s1 = 0;
       let s2 = 0;
@@ -138,51 +145,40 @@ export class StarFit {
       let silent = 0;
       let product = star.weightProduct[g];
       for (let slot = 0; slot < used; slot++) {
-        const band = bands[slot];
         const w = weights[firstWeight + slot];
-        const predicted = absMag[band][k];
-        if (Number.isNaN(predicted)) {
+        const a = nodeRatios[slot][k];
+        const r = mags[slot] - nodeMags[slot][k] - priorAV * a;
+        // NaN: this node is silent in this band.
+        if (Number.isNaN(r)) {
           silent++;
           product /= w;
           continue;
         }
-        const a = extinctionRatio[band][k];
-        const r = mags[slot] - predicted - priorAV * a;
         const wa = w * a;
+        const wr = w * r;
         s0 += w;
         s1 += wa;
         s2 += wa * a;
-        r0 += w * r;
-        r1 += wa * r;
-        rr += w * r * r;
+        r0 += wr;
+        r1 += wr * a;
+        rr += wr * r;
       }
       if (silent === used) continue;
-      const gain = priorAVVariance > 0 ? 1 / (priorPrecision + s2) : 0;
+      const narrowing = 1 / (1 + priorAVVariance * s2);
+      const gain = priorAVVariance * narrowing;
       const t0 = s0 - gain * s1 * s1;
-      const t1 = r0 - gain * s1 * r1;
-      const x = t1 / t0;
-      const chi2 = rr - gain * r1 * r1 - t1 * x;
-      if (chi2 > MISFIT_LIMIT_CHI2 || !distance.weigh(group, k, x, 1 / t0, JOINT_LIMIT_CHI2 - chi2)) continue;
+      const variance = 1 / t0;
+      const x = (r0 - gain * s1 * r1) * variance;
+      const chi2 = rr - gain * r1 * r1 - t0 * x * x;
+      if (chi2 > MISFIT_LIMIT_CHI2) continue;
+      if (!distance.weigh(group, k, x, variance, chi2, JOINT_LIMIT_CHI2)) continue;
       const norm =
-        Math.sqrt(product / (t0 * (1 + priorAVVariance * s2))) *
-        COLOUR_NORM[used - silent - 1] *
-        FLAT_NORM[silent];
-      const least = NEGLIGIBLE * this.largest;
-      if (norm * distance.density < least) continue;
-      const likelihood = norm * Math.exp(-0.5 * chi2);
-      const density = likelihood * distance.density;
-      if (density < least) continue;
-      this.largest = Math.max(this.largest, density);
-      total += this.keep(
-        group,
-        k,
-        x,
-        1 / t0,
-        chi2,
-        likelihood,
-        gain * (r1 - s1 * x),
-        gain * (1 + (gain * s1 * s1) / t0),
-      );
+        Math.sqrt(product * variance * narrowing) * COLOUR_NORM[used - silent - 1] * FLAT_NORM[silent];
+      const density = norm * distance.density;
+      if (density < NEGLIGIBLE * this.largest) continue;
+      if (density > this.largest) this.largest = density;
+      const extinction = priorAV + gain * (r1 - s1 * x);
+      total += this.keep(group, k, x, norm, extinction, gain * (1 + gain * s1 * s1 * variance));
     }
     return total;
   }
@@ -192,20 +188,17 @@ export class StarFit {
     group: NoiseGroup,
     k: number,
     x: number,
-    variance: number,
-    chi2: number,
-    likelihood: number,
-    deviation_AV: number,
+    norm: number,
+    extinction: number,
     extinctionVariance: number,
   ): number {
     const { distance } = this;
     // A negative extinction is refused, and the need of one counts against the node.
-    const extinction = this.star.priorAV + deviation_AV;
     const positive = extinctionVariance > 0 ? normalTail(extinction / Math.sqrt(extinctionVariance)) : 1;
-    const weight = likelihood * distance.density * positive;
+    const weight = norm * distance.density * positive;
     if (!(weight > 0)) return 0;
-    this.memberOdds += likelihood * positive * distance.members;
-    distance.findModulus(group, k, x, variance, JOINT_LIMIT_CHI2 - chi2);
+    this.memberOdds += norm * positive * distance.members;
+    distance.findModulus(group, x);
     const slot = this.survivors++;
     this.node[slot] = k;
     this.weight[slot] = weight;
@@ -220,23 +213,31 @@ export class StarFit {
   /** The class that takes any colour; returns its weight, not yet normalised. */
   private fitFlat(): number {
     const { star, distance } = this;
-    const { flat, field } = this.model;
-    const mag = star.mags[star.referenceSlot] - field.extinction_AV;
+    const { flat, extinction } = this.model;
+    const mag = star.mags[star.referenceSlot];
     const likelihood = FLAT_NORM[star.used - 1];
     let total = 0;
     let first = 0;
     let second = 0;
+    let dust = 0;
+    let dust2 = 0;
     for (let j = 0; j < flat.absMag.length; j++) {
-      const density = distance.weighFlat(mag - flat.absMag[j], JOINT_LIMIT_CHI2);
+      const offset = mag - flat.absMag[j];
+      const av = star.extinctionByNode ? extinction.atApparentModulus(offset) : star.priorAV;
+      const density = distance.weighFlat(offset - av, JOINT_LIMIT_CHI2);
       if (density === 0) continue;
       const weight = likelihood * flat.density[j] * density;
       total += weight;
+      dust += weight * av;
+      dust2 += weight * (av * av + extinction.variance(av));
       first += weight * distance.modulus_mag;
       second += weight * (distance.modulusVariance_mag2 + distance.modulus_mag ** 2);
     }
     this.flatModulus_mag = total > 0 ? first / total : Number.NaN;
     this.flatModulusVariance_mag2 =
       total > 0 ? Math.max(0, second / total - this.flatModulus_mag ** 2) : Number.NaN;
+    this.flatExtinction_AV = dust / total;
+    this.flatExtinctionVariance = Math.max(0, dust2 / total - this.flatExtinction_AV ** 2);
     this.classOdds[CLASS_INDEX.none] = total;
     return total;
   }
@@ -272,5 +273,6 @@ function firstAtLeast(sorted: Float64Array, limit: number, start: number, end: n
 
 /** Share of a normal distribution above -z: logistic approximation, good to 0.01. */
 function normalTail(z: number): number {
-  return z > 5 ? 1 : 1 / (1 + Math.exp(-1.702 * z));
+  const odds = fallingExponential(1.702 * Math.abs(z));
+  return (z > 0 ? 1 : odds) / (1 + odds);
 }

@@ -1,9 +1,12 @@
 import dwarfsText from '../../tables/dwarfs.csv';
+import { BAND_COUNT } from '../bands.js';
 import { subtypeNumber } from '../spectral-subtype.js';
 import { parseTable, type Row } from '../table.js';
 import {
+  type FillMissing,
   fillBand,
   fillFromColours,
+  fillFromGr,
   magnitude,
   type Track,
   type TrackPoint,
@@ -14,9 +17,12 @@ import {
  * Class V from O3 to T9.5: Pecaut & Mamajek 2013, ApJS 208, 9, Table 5, in the authors' extended version of
  * 2024.05.15 (src/tables/dwarfs.csv). Brown dwarfs later than L4 carry no V: only the bands that exist.
  */
-export function dwarfTrack(fillMissing: (absMag: Float64Array) => void): Track {
-  const points = parseTable(dwarfsText).rows.map(row => dwarfPoint(row, fillMissing));
-  return { name: 'dwarfs', starClass: 'V', points };
+export function dwarfTrack(fillMissing: FillMissing): Track {
+  const fillSigma_mag = new Float64Array(BAND_COUNT);
+  const points = parseTable(dwarfsText).rows.map(row =>
+    dwarfPoint(row, absMag => fillMissing(absMag, fillSigma_mag)),
+  );
+  return { name: 'dwarfs', starClass: 'V', points, fillSigma_mag };
 }
 
 function dwarfPoint(row: Row, fillMissing: (absMag: Float64Array) => void): TrackPoint {
@@ -38,10 +44,7 @@ function dwarfPoint(row: Row, fillMissing: (absMag: Float64Array) => void): Trac
   fillBand(absMag, 'G', row.number('M_G'));
   fillBand(absMag, 'RP', magnitude(absMag, 'G') - row.number('G_RP'));
   fillBand(absMag, 'BP', magnitude(absMag, 'RP') + row.number('BP_RP'));
-  // The g-r of the table with V-g of Lupton 2005, so that g and r keep the table's own colour.
-  const gr = row.number('g_r');
-  fillBand(absMag, 'g', v + 0.0038 + 0.5784 * gr);
-  fillBand(absMag, 'r', magnitude(absMag, 'g') - gr);
+  fillFromGr(absMag, v, row.number('g_r'));
   fillBand(absMag, 'i', magnitude(absMag, 'r') - row.number('r_i'));
   fillBand(absMag, 'z', magnitude(absMag, 'i') - row.number('i_z'));
   fillMissing(absMag);

@@ -1,11 +1,15 @@
-import { applyTransform, findTransform, readTransforms } from '../transforms.js';
-import { fillBand, magnitude } from './track.js';
+import { BAND_INDEX, type Band } from '../bands.js';
+import { applyTransform, findTransform, readTransforms, type Transform } from '../transforms.js';
+import { type FillMissing, fillBand, magnitude } from './track.js';
+
+/** Scatter of relations whose authors state none: they agree with others to 0.03-0.05 mag (head of transforms.csv). */
+const UNSTATED_SIGMA_MAG = 0.04;
 
 /**
  * Fills the bands a table lacks by published transformations, inside their range; a band that cannot be
  * reached stays unknown. The relations are for ordinary stars: white dwarfs carry their own magnitudes.
  */
-export function makeBandFiller(): (absMag: Float64Array) => void {
+export function makeBandFiller(): FillMissing {
   const transforms = readTransforms();
   const gV = findTransform(transforms, 'G-V', 'V-Ic', 'Riello');
   const bpV = findTransform(transforms, 'BP-V', 'V-Ic', 'Riello');
@@ -22,26 +26,32 @@ export function makeBandFiller(): (absMag: Float64Array) => void {
     transform: findTransform(transforms, `${band}-${band}P1`, 'gP1-rP1', 'Tonry'),
   }));
 
-  return absMag => {
+  return (absMag, fillSigma_mag) => {
+    const fill = (band: Band, value: number, ...by: readonly Transform[]) => {
+      if (!Number.isNaN(magnitude(absMag, band)) || Number.isNaN(value)) return;
+      fillBand(absMag, band, value);
+      const index = BAND_INDEX[band];
+      fillSigma_mag[index] = Math.max(fillSigma_mag[index], Math.hypot(...by.map(scatterOf)));
+    };
     const v = magnitude(absMag, 'V');
     const vIc = v - magnitude(absMag, 'Ic');
-    fillBand(absMag, 'G', v + applyTransform(gV, vIc));
-    fillBand(absMag, 'RP', v + applyTransform(rpV, vIc));
-    fillBand(absMag, 'BP', v + applyTransform(bpV, vIc));
-    fillBand(absMag, 'BP', magnitude(absMag, 'RP') + applyTransform(bpRp, vIc));
+    fill('G', v + applyTransform(gV, vIc), gV);
+    fill('RP', v + applyTransform(rpV, vIc), rpV);
+    fill('BP', v + applyTransform(bpV, vIc), bpV);
+    fill('BP', magnitude(absMag, 'RP') + applyTransform(bpRp, vIc), bpRp);
 
-    fillBand(absMag, 'g', v + applyTransform(gFromBV, magnitude(absMag, 'B') - v));
+    fill('g', v + applyTransform(gFromBV, magnitude(absMag, 'B') - v), gFromBV);
     // V-g = c0 + c1 (g-r) solved for r.
     const [c0, c1] = vG.coefficients;
-    fillBand(absMag, 'r', magnitude(absMag, 'g') - (v - magnitude(absMag, 'g') - c0) / c1);
+    fill('r', magnitude(absMag, 'g') - (v - magnitude(absMag, 'g') - c0) / c1, gFromBV, vG);
     const gr = magnitude(absMag, 'g') - magnitude(absMag, 'r');
-    fillBand(absMag, 'Rc', magnitude(absMag, 'r') + applyTransform(rcR, gr));
+    fill('Rc', magnitude(absMag, 'r') + applyTransform(rcR, gr), rcR);
     // Ic-r = c0 + c1 (r-i) solved for i.
     const r = magnitude(absMag, 'r');
-    fillBand(absMag, 'i', r - (magnitude(absMag, 'Ic') - r - icI.coefficients[0]) / icI.coefficients[1]);
+    fill('i', r - (magnitude(absMag, 'Ic') - r - icI.coefficients[0]) / icI.coefficients[1], icI);
     // U-B = c0 + c1 (u-g) solved for u.
     const ub = magnitude(absMag, 'U') - magnitude(absMag, 'B');
-    fillBand(absMag, 'u', magnitude(absMag, 'g') + (ub - uB.coefficients[0]) / uB.coefficients[1]);
+    fill('u', magnitude(absMag, 'g') + (ub - uB.coefficients[0]) / uB.coefficients[1], uB);
 
     const grP1 = panStarrsColour(
       gr,
@@ -49,9 +59,13 @@ export function makeBandFiller(): (absMag: Float64Array) => void {
       panStarrs[1].transform.coefficients,
     );
     for (const { band, target, transform } of panStarrs) {
-      fillBand(absMag, target, magnitude(absMag, band) - applyTransform(transform, grP1));
+      fill(target, magnitude(absMag, band) - applyTransform(transform, grP1), transform);
     }
   };
+}
+
+function scatterOf({ sigma_mag }: Transform): number {
+  return Number.isNaN(sigma_mag) ? UNSTATED_SIGMA_MAG : sigma_mag;
 }
 
 /** gP1-rP1 of an SDSS g-r: the two Tonry relations subtracted and solved by fixed-point steps. */

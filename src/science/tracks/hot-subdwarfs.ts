@@ -11,7 +11,7 @@ export function hotSubdwarfTrack(dwarfs: Track): Track {
   const points = dwarfs.points
     .filter(point => point.subtype >= HOTTEST_SUBTYPE && point.subtype <= COOLEST_SUBTYPE)
     .map(hotSubdwarfPoint);
-  return { name: 'hot subdwarfs', starClass: 'sdOB', points };
+  return { name: 'hot subdwarfs', starClass: 'sdOB', points, fillSigma_mag: dwarfs.fillSigma_mag };
 }
 
 const HOTTEST_SUBTYPE = 3;

@@ -12,7 +12,7 @@ export function subdwarfTrack(dwarfs: Track, metallicity_FeH: number): Track {
   const points = dwarfs.points
     .filter(point => point.subtype >= FIRST_SUBTYPE && point.subtype <= LAST_SUBTYPE)
     .map(point => subdwarfPoint(point, offset_mag));
-  return { name: 'subdwarfs', starClass: 'sd', points };
+  return { name: 'subdwarfs', starClass: 'sd', points, fillSigma_mag: dwarfs.fillSigma_mag };
 }
 
 /** Metallicity of the middle subdwarf sequence: the inner halo's. */

@@ -16,7 +16,12 @@ export interface Track {
   readonly name: string;
   readonly starClass: StarClass;
   readonly points: readonly TrackPoint[];
+  /** Scatter of the transformation a band was filled by, laid out as BANDS; 0 where the source gives the band. */
+  readonly fillSigma_mag: Float64Array;
 }
+
+/** Fills the bands a point lacks, and notes the scatter of what filled them. */
+export type FillMissing = (absMag: Float64Array, fillSigma_mag: Float64Array) => void;
 
 /** Absolute magnitudes by band, all unknown. */
 export function unknownMagnitudes(): Float64Array {
@@ -41,6 +46,12 @@ export function fillFromColours(
   fillBand(absMag, 'U', b + colours.U_B);
   fillBand(absMag, 'Rc', v - colours.V_Rc);
   fillBand(absMag, 'Ic', v - colours.V_Ic);
+}
+
+/** SDSS g and r that keep a table's own g-r, placed by V-g = -0.0038 - 0.5784 (g-r) of Lupton 2005 (transforms.csv). */
+export function fillFromGr(absMag: Float64Array, v: number, gr: number): void {
+  fillBand(absMag, 'g', v + 0.0038 + 0.5784 * gr);
+  fillBand(absMag, 'r', magnitude(absMag, 'g') - gr);
 }
 
 export function magnitude(absMag: Float64Array, band: Band): number {

@@ -1,5 +1,5 @@
 import whiteDwarfsText from '../../tables/white_dwarfs.csv';
-import type { Band } from '../bands.js';
+import { BAND_COUNT, type Band } from '../bands.js';
 import { parseTable, type Row } from '../table.js';
 import { fillBand, fillFromColours, type Track, type TrackPoint, unknownMagnitudes } from './track.js';
 
@@ -14,6 +14,7 @@ export function whiteDwarfTracks(): readonly Track[] {
     name: `white dwarfs ${type}`,
     starClass: 'WD' as const,
     points: rows.filter(row => row.text('type') === type).map(whiteDwarfPoint),
+    fillSigma_mag: new Float64Array(BAND_COUNT),
   }));
 }
 
