@@ -118,6 +118,10 @@ export interface StarDetail {
   readonly distanceLow_pc: number;
   readonly distanceHigh_pc: number;
   readonly extinction_AV: number;
+  readonly extinctionSigma_AV: number;
+  /** Decimal logarithm of the bolometric luminosity, Suns. */
+  readonly logLuminosity: number;
+  readonly logLuminositySigma: number;
   readonly parallax_mas: number;
   readonly parallaxSigma_mas: number;
   readonly flags: readonly RaisedFlag[];

@@ -18,7 +18,7 @@ export const FORMATS: Readonly<Record<'table' | 'jsonl' | 'csv', StarFormat>> = 
 
 function csvHead(): string {
   const odds = CLASSES.map(name => `odds_${name}`).join(',');
-  return `id,ra_deg,dec_deg,colour,colour_sigma,abs_mag,abs_mag_sigma,spectral_type,luminosity_class,${odds},teff_K,teff_sigma_K,distance_pc,extinction_AV,flags,because,cautions,setup,exposures,each_s,total_s,start_by`;
+  return `id,ra_deg,dec_deg,colour,colour_sigma,abs_mag,abs_mag_sigma,spectral_type,luminosity_class,${odds},teff_K,teff_sigma_K,distance_pc,extinction_AV,extinction_AV_sigma,log_luminosity,log_luminosity_sigma,radius_Rsun,radius_sigma_Rsun,flags,because,cautions,setup,exposures,each_s,total_s,start_by`;
 }
 
 function csvLine(record: StarRecord): string {
@@ -38,6 +38,11 @@ function csvLine(record: StarRecord): string {
     record.teff_sigma_K,
     record.distance_pc,
     record.extinction_AV,
+    record.extinction_AV_sigma,
+    record.log_luminosity,
+    record.log_luminosity_sigma,
+    record.radius_Rsun,
+    record.radius_sigma_Rsun,
     record.flags.map(flag => flag.code).join(' '),
     record.flags.map(flag => flag.because).join('; '),
     record.cautions.join('; '),

@@ -5,6 +5,7 @@ import type { FollowUpDesk } from '../../night/follow-up.js';
 import type { NightState } from '../../night/night-state.js';
 import { colourName } from '../../science/bands.js';
 import { CLASSES } from '../../science/classes.js';
+import { stellarRadius } from '../../science/luminosity.js';
 import { temperatureTypeText } from '../../science/odds/index.js';
 
 /** One star of `classify --format jsonl`: the keys and their order are a contract. null = not known. */
@@ -25,6 +26,11 @@ export interface StarRecord {
   readonly teff_sigma_K: number | null;
   readonly distance_pc: number | null;
   readonly extinction_AV: number | null;
+  readonly extinction_AV_sigma: number | null;
+  readonly log_luminosity: number | null;
+  readonly log_luminosity_sigma: number | null;
+  readonly radius_Rsun: number | null;
+  readonly radius_sigma_Rsun: number | null;
   readonly flags: readonly {
     readonly code: string;
     readonly odds: number | null;
@@ -75,6 +81,12 @@ export class RecordMaker {
     const known = odds.odds[star * CLASSES.length] >= 0;
     const starClass = CLASSES[odds.classIndex[star]];
     const type = known ? temperatureTypeText(starClass, odds.subtype[star], odds.teff_K[star]) : '';
+    const { radius_Rsun, sigma_Rsun } = stellarRadius({
+      logLuminosity: odds.logLuminosity[star],
+      logLuminositySigma: odds.logLuminositySigma[star],
+      teff_K: odds.teff_K[star],
+      teffSigma_K: odds.teffSigma_K[star],
+    });
     return {
       id: catalogue.ids[star],
       ra_deg: rounded(night.positions.ra_deg[star], 6),
@@ -94,6 +106,11 @@ export class RecordMaker {
       teff_sigma_K: rounded(odds.teffSigma_K[star], 0),
       distance_pc: rounded(10 ** ((odds.modulus_mag[star] + 5) / 5), 1),
       extinction_AV: rounded(odds.extinction_AV[star], 3),
+      extinction_AV_sigma: rounded(odds.extinctionSigma_AV[star], 3),
+      log_luminosity: rounded(odds.logLuminosity[star], 3),
+      log_luminosity_sigma: rounded(odds.logLuminositySigma[star], 3),
+      radius_Rsun: rounded(radius_Rsun, 4),
+      radius_sigma_Rsun: rounded(sigma_Rsun, 4),
       flags: (entry?.flags ?? []).map(flag => ({ ...flag, odds: rounded(flag.odds, 4) })),
       cautions: entry?.cautions ?? [],
       exposures: (followUp?.exposures ?? []).map(exposureRecord),

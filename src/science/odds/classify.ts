@@ -107,7 +107,8 @@ function luminosity(model: ClassModel, fit: StarFit, best: number, i: number, ou
     if (Number.isNaN(bolometric)) continue;
     known += w;
     mean += w * bolometric;
-    square += w * (bolometric * bolometric + fit.modulusVariance_mag2[slot]);
+    const variance = fit.modulusVariance_mag2[slot] + fit.extinctionVariance[slot];
+    square += w * (bolometric * bolometric + variance);
   }
   const isKnown = known > LEAST_KNOWN * weight;
   out.logLuminosity[i] = isKnown ? logLuminosity(mean / known) : Number.NaN;

@@ -1,6 +1,7 @@
 import { formatDec, formatRa } from '../../catalogue/coordinates/format-angle.js';
 import type { ExposureSuggestion } from '../../follow/exposure/suggestion.js';
 import type { StarDetail } from '../../night/view.js';
+import { stellarRadius } from '../../science/luminosity.js';
 import { glyphsOf } from '../terminal/glyphs.js';
 import { Grid } from '../terminal/grid.js';
 import type { GlyphName } from '../terminal/look.js';
@@ -128,7 +129,8 @@ function numbers(detail: StarDetail, glyphs: GlyphName): Line[] {
     ['Teff', temperature(detail, plusMinus)],
     ['parallax', withUnit(withSigma(detail.parallax_mas, detail.parallaxSigma_mas, plusMinus), 'mas')],
     ['distance', distanceText(detail)],
-    ['A_V', withUnit(fixed(detail.extinction_AV, 2), 'mag')],
+    ['A_V', withUnit(withSigma(detail.extinction_AV, detail.extinctionSigma_AV, plusMinus), 'mag')],
+    ['L, R', luminosityText(detail, plusMinus)],
   ];
   return rows.map(([label, text]) => [dim(label.padEnd(LABEL_WIDTH)), plain(text)]);
 }
@@ -138,6 +140,14 @@ function temperature({ teff_K, teffSigma_K }: StarDetail, plusMinus: string): st
   return Number.isNaN(teff_K + teffSigma_K)
     ? teff
     : teff.replace(' K', ` ${plusMinus} ${teffText(teffSigma_K)}`);
+}
+
+/** '25 Suns, 9.7 ± 0.4 R': how bright and how large it really is. */
+function luminosityText(detail: StarDetail, plusMinus: string): string {
+  if (Number.isNaN(detail.logLuminosity)) return 'not known';
+  const { radius_Rsun, sigma_Rsun } = stellarRadius(detail);
+  const suns = Number((10 ** detail.logLuminosity).toPrecision(2));
+  return `${suns} Suns, ${withSigma(radius_Rsun, sigma_Rsun, plusMinus)} R`;
 }
 
 function withUnit(text: string, unit: string): string {

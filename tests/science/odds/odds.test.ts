@@ -165,4 +165,96 @@ describe('reddening', () => {
     expect(Math.abs(sun.subtype - 42)).toBeLessThan(2.5);
     expect(Math.abs(sun.columns.extinction_AV[0] - av)).toBeLessThan(0.15);
   });
+
+  const DUST = { extinction_AVPerKpc: 1.5, scaleHeight_pc: 120, latitude_deg: 5, patchiness: 0.3 };
+  const dusty = { ...OPEN_FIELD, extinctionSigma_AV: 0.02, dust: DUST };
+
+  it('grows with the distance where the profile describes the dust: a near star hardly sees it', () => {
+    const near = star(11.5, 0.05, { parallax_mas: 10 });
+    const far = {
+      mags: { V: 4.8 + 10 + 1.07, B: 5.45 + 10 + 1.42 },
+      parallax_mas: 1,
+      parallaxSigma_mas: 0.02,
+    };
+    const [white, sun] = classifyAll([near, far], ['B', 'V'], BV_AXES, dusty);
+    expect(white.best).toBe('WD');
+    expect(white.columns.extinction_AV[0]).toBeLessThan(0.2);
+    expect(Math.abs(sun.columns.extinction_AV[1] - 1.07)).toBeLessThan(0.25);
+    expect(sun.columns.extinctionSigma_AV[1]).toBeGreaterThan(0.05);
+    expect(Math.abs(sun.subtype - 42)).toBeLessThan(4);
+  });
+
+  it('without a parallax follows the distance each class needs: a giant would be far and red, a dwarf near', () => {
+    const colours = { V: 13, B: 13 + 1.35 };
+    const stars = [{ mags: colours }];
+    const [clear] = classifyAll(stars, ['B', 'V'], BV_AXES, OPEN_FIELD);
+    const [dim] = classifyAll(stars, ['B', 'V'], BV_AXES, dusty);
+    // A dwarf of V 13 and B-V 1.35 is at 80 pc and clean, a giant at several kpc and reddened: its subtype is earlier.
+    expect(dim.columns.extinction_AV[0]).toBeGreaterThan(clear.columns.extinction_AV[0] + 0.3);
+    expect(dim.subtype).toBeLessThan(clear.subtype - 1);
+  });
+});
+
+describe('a star without a distance', () => {
+  const colourOnly = (pmRa_masPerYear: number) => ({
+    mags: { V: 15, B: 15.1 },
+    pmRa_masPerYear,
+    pmDec_masPerYear: 0,
+  });
+  it('is probably near when it moves fast: a white dwarf rather than an A star', () => {
+    const [unknown, slow, fast] = classifyAll(
+      [colourOnly(Number.NaN), colourOnly(1), colourOnly(180)],
+      ['B', 'V'],
+      BV_AXES,
+    );
+    expect(fast.odds.WD).toBeGreaterThan(0.95);
+    expect(slow.odds.WD).toBeLessThan(unknown.odds.WD);
+    expect(fast.columns.modulus_mag[2]).toBeLessThan(slow.columns.modulus_mag[1] - 5);
+  });
+});
+
+describe('photometric floors', () => {
+  it('a band that the profile trusts less counts less', () => {
+    const odd = { mags: { B: 10.46, V: 9.81, Ic: 9.3 }, parallax_mas: 10, parallaxSigma_mas: 0.1 };
+    const bands = ['B', 'V', 'Ic'] as const;
+    const [trusted] = classifyAll([odd], bands, BV_AXES);
+    const [doubted] = classifyAll([odd], bands, BV_AXES, { ...OPEN_FIELD, bandFloor_mag: { Ic: 0.5 } });
+    expect(trusted.odds.none).toBeGreaterThan(doubted.odds.none);
+    expect(doubted.odds.V).toBeGreaterThan(0.9);
+  });
+});
+
+describe('one more band', () => {
+  it.each([
+    ['G2 V', 'V', { B: 10.45, V: 9.8, Ic: 9.087, J: 8.656, Ks: 8.236 }, 10],
+    ['K0 III', 'III', { B: 11.7, V: 10.7, Ic: 9.7 }, 1],
+    ['DA 12000 K', 'WD', { B: 16.75, V: 16.67, Ic: 16.72 }, 10],
+  ] as const)(
+    'that agrees never makes the right class much less likely: %s',
+    (_, right, mags, parallax_mas) => {
+      const all = Object.keys(mags) as (keyof typeof mags)[];
+      const by = (count: number) => {
+        const bands = all.slice(0, count);
+        const [result] = classifyAll(
+          [
+            {
+              mags: Object.fromEntries(bands.map(band => [band, mags[band]])),
+              parallax_mas,
+              parallaxSigma_mas: 0.05 * parallax_mas,
+            },
+          ],
+          bands,
+          BV_AXES,
+        );
+        return result.odds[right];
+      };
+      let before = by(2);
+      expect(before).toBeGreaterThan(0.5);
+      for (let count = 3; count <= all.length; count++) {
+        const now = by(count);
+        expect(now).toBeGreaterThan(before - 0.05);
+        before = now;
+      }
+    },
+  );
 });
