@@ -37,8 +37,6 @@ function publishedSteps(type: string): number[] {
  * magnitudes, so that two colours and a distance cannot separate a luminous B star from an earlier dwarf.
  */
 const EXCEPTIONS: Readonly<Record<string, string>> = {
-  'zeta Pup': 'O4 supergiant at M_V -5.5: B-V is blind there, an O6 dwarf has the same place',
-  'epsilon CMa': 'B1.5 II at M_V -4.0 and B-V -0.21: an early B dwarf lies within the scatter',
   'gamma Ori': 'B2 III at M_V -2.8 and B-V -0.22: the dwarf of the same colour is only 0.9 mag fainter',
   'alpha Dra':
     'A0 III at M_V -1.2 and B-V -0.05: the dwarf of that brightness is 0.06 mag bluer, and far commoner',

@@ -4,23 +4,24 @@
  */
 
 /**
- * Stars per 20-pc sphere (33,510 cubic parsec) and V magnitude, M_V -1 to 17: Jahreiss & Wielen 1997 (in
- * Hipparcos - Venice '97, ESA SP-402, 675), from memory. Brighter: falling by 3-4 a magnitude, to meet the
- * roughly 1.5e-7 O stars per cubic parsec of the solar neighbourhood (common figure, from memory).
- * Fainter than 14: nearly flat down to the late M dwarfs (from memory).
+ * Dwarfs per 20-pc sphere (33,510 cubic parsec) and V magnitude. M_V 4 to 17: Jahreiss & Wielen 1997 (in
+ * Hipparcos - Venice '97, ESA SP-402, 675), from memory. Brighter, where 20 pc hold too few: the general luminosity
+ * function of handbooks (Allen's Astrophysical Quantities, from memory) less the evolved stars. Both ends are chosen so
+ * that the numbers of the naked-eye catalogue come out, see EVOLVED. Fainter than 14: nearly flat down to the late M
+ * dwarfs (from memory).
  */
 const COUNTS: readonly (readonly [number, number])[] = [
-  [-6, 0.0004],
-  [-5, 0.0015],
-  [-4, 0.006],
-  [-3, 0.025],
-  [-2, 0.15],
-  [-1, 1],
-  [0, 4],
-  [1, 14],
-  [2, 24],
-  [3, 43],
-  [4, 78],
+  [-6, 0.00016],
+  [-5, 0.0006],
+  [-4, 0.0022],
+  [-3, 0.008],
+  [-2, 0.03],
+  [-1, 0.18],
+  [0, 1.1],
+  [1, 6],
+  [2, 13],
+  [3, 29],
+  [4, 70],
   [5, 108],
   [6, 121],
   [7, 102],
@@ -64,67 +65,68 @@ export const HOT_SUBDWARF_PER_PC3 = 6e-7;
 export const ULTRACOOL_PER_PC3_PER_SUBTYPE = 5e-4;
 
 /**
- * Evolved stars per cubic parsec and spectral subtype, by letter ranges of the running subtype number. From
- * memory: chosen to return the numbers of the naked-eye catalogue within a factor of two (about 2,000 K
- * giants, 250 A giants, 150 Ib supergiants to V 6.5), the clump near G8-K2 carrying most giants.
+ * Evolved stars per cubic parsec and spectral subtype, by the running subtype number. Chosen so that a disc of the
+ * usual thickness (scale heights 60 pc for O, B and supergiants to 250 pc for K giants), with 0.4-0.8 mag of extinction a
+ * kiloparsec, shows the numbers of the naked-eye catalogue (V < 6.5) by letter and class, from memory and rounded:
+ * tests/published/naked-eye-counts.test.ts holds them.
  */
 const EVOLVED: Readonly<Record<string, readonly (readonly [number, number])[]>> = {
   IV: [
-    [9, 1e-8],
-    [15, 3e-7],
-    [20, 2e-6],
-    [25, 8e-6],
-    [30, 2.5e-5],
-    [36, 4e-5],
-    [45, 4e-5],
+    [9, 2.5e-8],
+    [15, 7e-7],
+    [20, 2.2e-6],
+    [25, 7e-6],
+    [30, 1.6e-5],
+    [36, 2.2e-5],
+    [45, 1.8e-5],
     [50, 5e-5],
-    [53, 2e-5],
+    [53, 3e-5],
   ],
   III: [
-    [8, 1e-9],
-    [12, 4e-8],
-    [17, 3e-7],
-    [22, 1e-6],
-    [30, 2e-6],
-    [38, 1.5e-6],
-    [44, 6e-6],
-    [47, 4e-5],
-    [50, 9e-5],
-    [52, 6e-5],
-    [55, 2e-5],
-    [60, 7e-6],
-    [64, 2e-6],
-    [68, 2e-7],
+    [8, 3e-9],
+    [12, 1.1e-7],
+    [17, 8e-7],
+    [22, 1.3e-6],
+    [30, 2.8e-6],
+    [38, 2e-6],
+    [44, 3e-6],
+    [47, 1e-5],
+    [50, 2.1e-5],
+    [52, 1.4e-5],
+    [55, 5e-6],
+    [60, 2.5e-6],
+    [64, 9e-7],
+    [68, 1e-7],
   ],
   II: [
-    [9, 4e-9],
-    [15, 1e-8],
-    [25, 8e-9],
-    [35, 1e-8],
-    [45, 6e-8],
-    [53, 6e-8],
-    [60, 3e-8],
-    [65, 2e-8],
+    [9, 1e-8],
+    [15, 2.6e-8],
+    [25, 2.2e-8],
+    [35, 4.5e-8],
+    [45, 8.5e-8],
+    [53, 1.2e-7],
+    [60, 6e-8],
+    [65, 4e-8],
   ],
   Ib: [
-    [9, 3e-9],
-    [15, 3e-9],
-    [30, 3e-9],
-    [45, 6e-9],
-    [53, 6e-9],
-    [65, 3e-9],
+    [9, 7e-9],
+    [15, 7e-9],
+    [30, 9e-9],
+    [45, 1.6e-8],
+    [53, 1.4e-8],
+    [65, 8e-9],
   ],
   Iab: [
-    [9, 1.5e-9],
-    [30, 1e-9],
-    [50, 1.5e-9],
-    [65, 1.5e-9],
+    [9, 3.5e-9],
+    [30, 1.6e-9],
+    [50, 1.7e-9],
+    [65, 2.5e-9],
   ],
   Ia: [
-    [9, 7e-10],
-    [30, 4e-10],
-    [50, 3e-10],
-    [65, 5e-10],
+    [9, 1.7e-9],
+    [30, 6.5e-10],
+    [50, 4e-10],
+    [65, 9e-10],
   ],
 };
 

@@ -53,7 +53,7 @@ interface Scatter {
  * from the precision the tables claim (0.01-0.03 mag) and the spread of metallicities.
  */
 const SCATTER: Readonly<Record<ModelledClass, Scatter>> = {
-  V: { magnitude_mag: 0.3, band_mag: 0.025 },
+  V: { magnitude_mag: 0.28, band_mag: 0.025 },
   IV: { magnitude_mag: 0.45, band_mag: 0.03 },
   III: { magnitude_mag: 0.65, band_mag: 0.03 },
   II: { magnitude_mag: 0.65, band_mag: 0.04 },
@@ -88,6 +88,11 @@ const BRANCHES: Readonly<Partial<Record<StarClass, readonly Branch[]>>> = {
     { share: 0.05, brighter_mag: 0.753 },
     { share: 0.09, brighter_mag: -0.85 },
   ],
+  // Ib stars with good parallaxes (alpha and beta Aqr, Polaris, epsilon Peg) lie 0.2-1.3 mag below the calibration.
+  Ib: [
+    { share: 0.5, brighter_mag: 0 },
+    { share: 0.5, brighter_mag: -0.9 },
+  ],
   // Old thick disc, inner halo, outer halo: [Fe/H] -1.0, -1.5, -2.0 in equal parts.
   sd: [-1.0, SUBDWARF_FEH, -2.0].map(metallicity => ({
     share: 1 / 3,
@@ -117,6 +122,14 @@ export function makeNodes(tracks: readonly Track[], colours = USUAL_COLOURS): re
   });
 }
 
+/** Dwarfs earlier than A0 brighten by a magnitude while they still are dwarfs: their sequence is wider. */
+const HOT_DWARF_SCATTER_MAG = 0.45;
+const FIRST_A_SUBTYPE = 20;
+
+function isHotDwarf(starClass: ModelledClass, point: TrackPoint): boolean {
+  return starClass === 'V' && point.subtype < FIRST_A_SUBTYPE;
+}
+
 /** Colour scatter of the class, together with that of the transformation a band was filled by. */
 function bandScatterOf(track: Track): readonly number[] {
   const { band_mag } = SCATTER[track.starClass as ModelledClass];
@@ -141,7 +154,7 @@ function makeNode(
     absMag: point.absMag,
     extinctionRatio: Float64Array.from(BANDS, band => law.ratio(band, bpRp)),
     density_perPc3,
-    scatter_mag: SCATTER[starClass].magnitude_mag,
+    scatter_mag: isHotDwarf(starClass, point) ? HOT_DWARF_SCATTER_MAG : SCATTER[starClass].magnitude_mag,
     bandScatter_mag,
     kinematics: starClass === 'sd' ? 'metal-poor' : 'disc',
     branches: BRANCHES[starClass] ?? SINGLE,
