@@ -1,6 +1,7 @@
 import type { Band } from '../science/bands.js';
 import { ASTROMETRY, type AstrometryName } from './astrometry.js';
 import type { BandColumn, FrameReadings } from './frame.js';
+import type { ReadingIndex } from './reading-index.js';
 
 /** What stays of a frame: identifiers and positions have done their work once its rows have their stars. */
 export interface KeptFrame {
@@ -38,19 +39,25 @@ export interface StarLightCurve {
 /** Readings of a star on the frames that have a time. */
 export function lightCurveOf(
   frames: ReadonlyMap<number, KeptFrame>,
+  index: ReadingIndex | undefined,
   star: number,
   band: Band,
 ): StarLightCurve {
   const points: { time_ms: number; mag: number; sigma_mag: number; frame: number; suspect: number }[] = [];
-  for (const [index, { mid_ms, bands, stars, suspect }] of frames) {
-    const column = bands.find(candidate => candidate.band === band);
-    if (column === undefined || Number.isNaN(mid_ms)) continue;
-    const row = stars.indexOf(star);
-    if (row < 0 || Number.isNaN(column.mag[row])) continue;
-    const sigma_mag = column.sigma_mag[row];
-    points.push({ time_ms: mid_ms, mag: column.mag[row], sigma_mag, frame: index, suspect: suspect[row] });
-  }
-  points.sort((a, b) => a.time_ms - b.time_ms);
+  index?.each(star, (frame, row) => {
+    const kept = frames.get(frame);
+    const column = kept?.bands.find(candidate => candidate.band === band);
+    if (kept === undefined || column === undefined || Number.isNaN(kept.mid_ms)) return;
+    const { mid_ms, suspect } = kept;
+    points.push({
+      time_ms: mid_ms,
+      mag: column.mag[row],
+      sigma_mag: column.sigma_mag[row],
+      frame,
+      suspect: suspect[row],
+    });
+  });
+  points.sort((a, b) => a.time_ms - b.time_ms || a.frame - b.frame);
   return {
     time_ms: Float64Array.from(points, point => point.time_ms),
     mag: Float64Array.from(points, point => point.mag),

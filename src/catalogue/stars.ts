@@ -1,11 +1,11 @@
 import { BANDS, type Band } from '../science/bands.js';
-import { type ZeroPointShift, zeroPointShift } from '../science/variability/zero-point-shift.js';
 import { Astrometry } from './astrometry.js';
 import { BandMeans } from './band-means.js';
 import { designation } from './coordinates/designation.js';
 import type { FrameReadings } from './frame.js';
 import { GrowingColumns } from './growing.js';
 import { type KeptFrame, keepFrame, lightCurveOf, type StarLightCurve } from './kept-frame.js';
+import { ReadingIndex } from './reading-index.js';
 import { NO_STAR, StarFinder } from './star-finder.js';
 
 /**
@@ -20,6 +20,7 @@ export class StarCatalogue {
   private readonly tallies = new GrowingColumns(['readings', 'lastFrame'], 0);
   private readonly means = new Map<Band, BandMeans>();
   private readonly frames = new Map<number, KeptFrame>();
+  private readonly readingsOf = new Map<Band, ReadingIndex>();
   private readonly finder: StarFinder;
   private readonly nameless = new Set<number>();
   private total = 0;
@@ -141,32 +142,14 @@ export class StarCatalogue {
     this.astrometry.clear();
     this.tallies.clear();
     this.means.clear();
+    this.readingsOf.clear();
     this.total = 0;
     for (const [index, frame] of this.frames) this.addReadings(frame, index);
   }
 
   /** Readings of a star on frames with a time, in order of time. */
   lightCurve(star: number, band: Band): StarLightCurve {
-    return lightCurveOf(this.frames, star, band);
-  }
-
-  /**
-   * How much fainter than the stars' means a frame is in a band, from its clean readings of stars that have
-   * others as well; undefined with fewer than three. Positive: the frame lost light.
-   */
-  frameShift(frameIndex: number, band: Band): ZeroPointShift | undefined {
-    const frame = this.frames.get(frameIndex);
-    const column = frame?.bands.find(candidate => candidate.band === band);
-    const means = this.means.get(band);
-    if (frame === undefined || column === undefined || means === undefined) return undefined;
-    const differences: number[] = [];
-    const sigmas: number[] = [];
-    frame.stars.forEach((star, row) => {
-      if (Number.isNaN(column.mag[row]) || frame.suspect[row] === 1 || means.count(star) < 2) return;
-      differences.push(column.mag[row] - means.mag(star));
-      sigmas.push(Math.hypot(column.sigma_mag[row], means.sigma(star)));
-    });
-    return zeroPointShift(differences, sigmas);
+    return lightCurveOf(this.frames, this.readingsOf.get(band), star, band);
   }
 
   private column(band: Band, value: (means: BandMeans, star: number) => number): Float64Array {
@@ -218,9 +201,12 @@ export class StarCatalogue {
     for (const { band, mag, sigma_mag } of frame.bands) {
       const means = this.means.get(band) ?? new BandMeans();
       this.means.set(band, means);
+      const index = this.readingsOf.get(band) ?? new ReadingIndex();
+      this.readingsOf.set(band, index);
       for (let row = 0; row < stars.length; row++) {
         if (Number.isNaN(mag[row])) continue;
         means.add(stars[row], mag[row], sigma_mag[row], suspect[row] === 1);
+        index.add(stars[row], frameIndex, row);
         readings[stars[row]]++;
         this.total++;
       }

@@ -171,8 +171,8 @@ export class NightEngine implements NightState {
   }
 
   private judge(stars: Uint32Array, frame: number): void {
-    const changed = this.changes.search(this.catalogue, this.frames);
-    const evidence = new EvidenceMaker(this, changed);
+    this.changes.search(this.catalogue, stars);
+    const evidence = new EvidenceMaker(this, this.changes);
     for (const star of stars) this.flags.judge(star, evidence.of(star), frame);
   }
 

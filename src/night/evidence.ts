@@ -4,7 +4,7 @@ import { CLASS_COUNT, CLASSES, type StarClass } from '../science/classes.js';
 import { ExtinctionLaw } from '../science/extinction.js';
 import { MainSequenceLifetime } from '../science/main-sequence-lifetime.js';
 import { absMagOnLine, type TrackLine, tracksInAxes } from '../science/odds/index.js';
-import type { ChangesOfNight } from './change-search.js';
+import type { ChangeSearch } from './change-search.js';
 import type { NightState } from './night-state.js';
 
 /** A member of the cluster by at least these odds takes its distance from the cluster. */
@@ -23,7 +23,7 @@ export class EvidenceMaker {
 
   constructor(
     private readonly night: NightState,
-    private readonly changes: ChangesOfNight,
+    private readonly changes: ChangeSearch,
   ) {
     const { model, inputs, catalogue, profile } = night;
     const lines = tracksInAxes(model.tracks, model.axes);
@@ -55,6 +55,12 @@ export class EvidenceMaker {
       whiteDwarfAbsMag: absMagOnLine(this.whiteDwarfs, intrinsicColour),
       subtype: odds.subtype[star],
       subtypeSigma: odds.subtypeSigma[star],
+      teff_K: odds.teff_K[star],
+      teffSigma_K: odds.teffSigma_K[star],
+      logLuminosity: odds.logLuminosity[star],
+      properMotion_masPerYr: Math.hypot(inputs.pmRa_masPerYear[star], inputs.pmDec_masPerYear[star]),
+      fitModulus_mag: odds.modulus_mag[star],
+      fitModulusSigma_mag: odds.modulusSigma_mag[star],
       distance: this.distanceOf(star),
       parallax_mas: inputs.parallax_mas[star],
       parallaxSigma_mas: inputs.parallaxSigma_mas[star],

@@ -15,10 +15,9 @@ export function median(values: ArrayLike<number>): number {
   return quantile(values, 0.5);
 }
 
-/** 1.4826 times the median absolute deviation: sigma of a Gaussian, blind to outliers; 0 when half are equal. */
-export function sigmaFromMad(values: ArrayLike<number>): number {
-  const centre = median(values);
-  return 1.4826 * median(Float64Array.from(values, value => Math.abs(value - centre)));
+/** Third quartile minus first: 1.349 sigma of a Gaussian. */
+export function interquartileRange(values: ArrayLike<number>): number {
+  return quantile(values, 0.75) - quantile(values, 0.25);
 }
 
 const LANCZOS = [
@@ -73,4 +72,48 @@ export function gammaQ(a: number, x: number): number {
 /** Probability that a chi-square by chance reaches this value. */
 export function chiSquareChance(chi2: number, degreesOfFreedom: number): number {
   return gammaQ(degreesOfFreedom / 2, chi2 / 2);
+}
+
+/** Probability that a Gaussian deviate exceeds z sigma. */
+export function gaussianUpperTail(z: number): number {
+  const tail = gammaQ(0.5, (z * z) / 2) / 2;
+  return z >= 0 ? tail : 1 - tail;
+}
+
+/**
+ * Regularised incomplete beta function I_x(a, b), a, b > 0, 0 <= x <= 1 (Abramowitz & Stegun 1964, 26.5.8: continued
+ * fraction, evaluated from the side where it converges fast).
+ */
+export function incompleteBeta(x: number, a: number, b: number): number {
+  if (!(x >= 0 && x <= 1)) return Number.NaN;
+  if (x === 0 || x === 1) return x;
+  if (x > (a + 1) / (a + b + 2)) return 1 - incompleteBeta(1 - x, b, a);
+  const front = Math.exp(logGamma(a + b) - logGamma(a) - logGamma(b) + a * Math.log(x) + b * Math.log1p(-x));
+  let c = 1;
+  let d = 1 / (1 - ((a + b) * x) / (a + 1));
+  let fraction = d;
+  for (let m = 1; m < MOST_TERMS; m++) {
+    const even = (m * (b - m) * x) / ((a + 2 * m - 1) * (a + 2 * m));
+    d = 1 / (1 + even * d);
+    c = 1 + even / c;
+    fraction *= c * d;
+    const odd = (-(a + m) * (a + b + m) * x) / ((a + 2 * m) * (a + 2 * m + 1));
+    d = 1 / (1 + odd * d);
+    c = 1 + odd / c;
+    fraction *= c * d;
+    if (Math.abs(c * d - 1) < 1e-15) break;
+  }
+  return (front * fraction) / a;
+}
+
+/** Smallest probability that is worked with: its logarithm has to be finite. */
+const LEAST_CHANCE = 1e-300;
+
+/**
+ * One chance from several independent ones: -2 sum ln p is a chi-square with two degrees of freedom for each (Fisher
+ * 1925, Statistical Methods for Research Workers).
+ */
+export function combinedChance(chances: readonly number[]): number {
+  const chi2 = chances.reduce((sum, p) => sum - 2 * Math.log(Math.max(p, LEAST_CHANCE)), 0);
+  return chiSquareChance(chi2, 2 * chances.length);
 }

@@ -28,6 +28,11 @@ const COMPONENTS: Readonly<Record<Kinematics, readonly Component[]>> = {
   ],
 };
 
+/** Velocity across the line of sight. */
+export function tangentialVelocity_kmPerS(motion_masPerYr: number, distance_pc: number): number {
+  return (KM_S_PER_MAS_YR_KPC * motion_masPerYr * distance_pc) / 1000;
+}
+
 /** Tables rarely carry errors of proper motions; this much is allowed for. */
 const MOTION_ERROR_MAS_PER_YR = 1;
 
@@ -41,7 +46,7 @@ export function properMotionDensity(
   distance_pc: number,
   kinematics: Kinematics,
 ): number {
-  const kmPerS_perMasPerYr = (KM_S_PER_MAS_YR_KPC * distance_pc) / 1000;
+  const kmPerS_perMasPerYr = tangentialVelocity_kmPerS(1, distance_pc);
   let density = 0;
   for (const { share, sigma_kmPerS } of COMPONENTS[kinematics]) {
     const variance = (sigma_kmPerS / kmPerS_perMasPerYr) ** 2 + MOTION_ERROR_MAS_PER_YR ** 2;

@@ -307,22 +307,4 @@ describe('light curves', () => {
     expect(curve.time_ms[1] - curve.time_ms[0]).toBe(20 * 60_000);
     expect(catalogue.bands).toEqual(['B', 'V']);
   });
-
-  it('show a frame that lost 0.4 mag', () => {
-    const catalogue = new StarCatalogue(1.5);
-    const stars = Array.from({ length: 30 }, (_, i) => ({ ra: 10 + i * 0.01, dec: 0, mag: 12 + 0.1 * i }));
-    for (let k = 0; k < 9; k++) catalogue.absorb(makeFrame(stars, 'V', k), k);
-    catalogue.absorb(
-      makeFrame(
-        stars.map(star => ({ ...star, mag: star.mag + 0.4 })),
-        'V',
-        9,
-      ),
-      9,
-    );
-    // The frame itself is a tenth of each mean.
-    expect(catalogue.frameShift(9, 'V')?.shift_mag).toBeCloseTo(0.36, 9);
-    expect(catalogue.frameShift(0, 'V')?.shift_mag).toBeCloseTo(-0.04, 9);
-    expect(catalogue.frameShift(9, 'B')).toBeUndefined();
-  });
 });

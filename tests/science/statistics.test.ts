@@ -1,17 +1,21 @@
 import { describe, expect, it } from 'vitest';
-import { gammaQ, logGamma, median, quantile, sigmaFromMad } from '../../src/science/statistics.js';
+import {
+  combinedChance,
+  gammaQ,
+  incompleteBeta,
+  logGamma,
+  median,
+  quantile,
+} from '../../src/science/statistics.js';
 import { testConstancy, testConstancyWithoutWorst } from '../../src/science/variability/chi-square.js';
-import { zeroPointShift } from '../../src/science/variability/zero-point-shift.js';
 
 describe('statistics at their edges', () => {
   it('of nothing are not known', () => {
     expect(median([])).toBeNaN();
-    expect(sigmaFromMad([])).toBeNaN();
   });
 
   it('of equal values are the value and no spread', () => {
     expect(quantile([5, 5, 5], 0.3)).toBe(5);
-    expect(sigmaFromMad([5, 5, 5, 9])).toBe(0);
     expect(testConstancy({ mag: [5, 5], sigma_mag: [0.1, 0.2] }).chi2).toBe(0);
   });
 
@@ -54,21 +58,23 @@ describe('gamma functions', () => {
   });
 });
 
-describe('zero point of a frame', () => {
-  it('is refused for two stars, a median for seven, robust for many', () => {
-    expect(zeroPointShift([0.1, 0.1], [0.01, 0.01])).toBeUndefined();
-    const few = [0.1, 0.1, 0.1, 0.1, 0.1, 0.1, 0.9];
-    expect(
-      zeroPointShift(
-        few,
-        few.map(() => 0.01),
-      )?.shift_mag,
-    ).toBe(0.1);
-    const many = Array.from({ length: 100 }, (_, i) => (i < 5 ? 2 : 0.1));
-    const shift = zeroPointShift(
-      many,
-      many.map(() => 0.01),
-    );
-    expect(Math.abs((shift?.shift_mag ?? 0) - 0.1)).toBeLessThan(0.002);
+describe('the incomplete beta function', () => {
+  // Closed forms: I_x(1, b) = 1 - (1-x)^b, I_x(a, 1) = x^a, and the symmetry at one half.
+  it.each([0.01, 0.3, 0.5, 0.9])('meets its closed forms at %s', x => {
+    expect(incompleteBeta(x, 1, 3)).toBeCloseTo(1 - (1 - x) ** 3, 12);
+    expect(incompleteBeta(x, 4.5, 1)).toBeCloseTo(x ** 4.5, 12);
+    expect(incompleteBeta(x, 7, 7) + incompleteBeta(1 - x, 7, 7)).toBeCloseTo(1, 12);
+  });
+  it('ends at 0 and 1', () => {
+    expect([0, 1].map(x => incompleteBeta(x, 2, 3))).toEqual([0, 1]);
+    expect(incompleteBeta(1.1, 2, 3)).toBeNaN();
+  });
+});
+
+describe('one chance from several', () => {
+  it('of one is itself, of two t (1 - ln t) with t their product (Fisher 1925)', () => {
+    expect(combinedChance([0.03])).toBeCloseTo(0.03, 12);
+    expect(combinedChance([0.03, 0.2])).toBeCloseTo(0.006 * (1 - Math.log(0.006)), 12);
+    expect(combinedChance([0, 0.5])).toBeGreaterThan(0);
   });
 });

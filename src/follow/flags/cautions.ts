@@ -6,9 +6,11 @@ export interface Caution {
   readonly blocks: (code: string) => boolean;
 }
 
-const CHANGE_CODES = new Set(['variable', 'brightened', 'faded']);
+const CHANGE_CODES = new Set(['variable', 'brightened', 'faded', 'colour-changed']);
 const everyFlag = () => true;
 const classFlags = (code: string) => !CHANGE_CODES.has(code);
+/** How fast a star moves does not hang on its colour. */
+const colourFlags = (code: string) => classFlags(code) && code !== 'high-velocity';
 
 /** Colours less certain than this do not carry a class. */
 const WEAK_COLOUR_MAG = 0.15;
@@ -29,12 +31,12 @@ export function standingCautions(evidence: StarEvidence): readonly Caution[] {
   if (Number.isNaN(evidence.colour)) {
     cautions.push({
       text: `no ${evidence.axes.colour.blue}-${evidence.axes.colour.red} yet: a frame in the missing band would settle it`,
-      blocks: classFlags,
+      blocks: colourFlags,
     });
   } else if (evidence.colourSigma > WEAK_COLOUR_MAG) {
     cautions.push({
       text: `its colour is uncertain by ${evidence.colourSigma.toFixed(2)} mag: more or deeper frames would settle it`,
-      blocks: classFlags,
+      blocks: colourFlags,
     });
   }
   if (evidence.distance === 'none') {

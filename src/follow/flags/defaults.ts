@@ -18,4 +18,7 @@ export const DEFAULT_FLAGS: Readonly<Record<string, FlagSetting>> = {
   variable: { on: true, threshold: 0.999, weight: 5 },
   'bright-giant': { on: true, threshold: 0.6, weight: 3 },
   'above-main-sequence': { on: true, threshold: 0.7, weight: 3 },
+  'colour-changed': { on: true, threshold: 0.999, weight: 6 },
+  'high-velocity': { on: true, threshold: 0.7, weight: 4 },
+  'instability-strip': { on: true, threshold: 0.6, weight: 2 },
 };

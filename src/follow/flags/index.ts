@@ -3,16 +3,32 @@ import type { FlagSetting } from '../settings.js';
 import { aboveMainSequence } from './above-main-sequence.js';
 import { betweenSequences } from './between-sequences.js';
 import { blueStraggler } from './blue-straggler.js';
+import { brightGiant } from './bright-giant.js';
+import { brightened } from './brightened.js';
 import { standingCautions } from './cautions.js';
-import { brightened, faded, variable } from './changes.js';
-import { brightGiant, hotSubdwarf, subdwarf, supergiant, whiteDwarf } from './class-flags.js';
+import { colourChanged } from './colour-changed.js';
 import type { RaisedFlag, StarEvidence } from './evidence.js';
+import { faded } from './faded.js';
 import { fitsNone } from './fits-none.js';
+import { highVelocity } from './high-velocity.js';
+import { hotSubdwarf } from './hot-subdwarf.js';
+import { instabilityStrip } from './instability-strip.js';
 import type { FlagRule } from './rule.js';
+import { subdwarf } from './subdwarf.js';
+import { supergiant } from './supergiant.js';
 import { ultracool } from './ultracool.js';
+import { variable } from './variable.js';
+import { whiteDwarf } from './white-dwarf.js';
 
 export { DEFAULT_FLAGS } from './defaults.js';
-export type { BandChange, DistanceSource, RaisedFlag, StarEvidence } from './evidence.js';
+export type {
+  BandChange,
+  DistanceSource,
+  PairedChange,
+  RaisedFlag,
+  StarChanges,
+  StarEvidence,
+} from './evidence.js';
 
 /** Every flag there is. Order: as they are listed to people. */
 const RULES: readonly FlagRule[] = [
@@ -29,6 +45,9 @@ const RULES: readonly FlagRule[] = [
   variable,
   brightened,
   faded,
+  colourChanged,
+  highVelocity,
+  instabilityStrip,
 ];
 
 /** Codes in fixed order: bit i of a star's flag bits belongs to FLAG_CODES[i]. */

@@ -40,3 +40,20 @@ function decimals(sigma: number): number {
 export function classSentence(evidence: StarEvidence, name: string, odds: number): string {
   return `${place(evidence)}${besideDwarfs(evidence)}; ${name} odds ${oddsText(odds)}${distanceWords(evidence)}`;
 }
+
+/** '02:41', of the clock in UT. */
+export function clockWords(time_ms: number): string {
+  return new Date(time_ms).toISOString().slice(11, 16);
+}
+
+/** '0.35 ± 0.02', with the decimals the error deserves. */
+export function withDecimals(value: number, sigma: number): string {
+  const digits = sigma < 0.01 ? 3 : 2;
+  return `${value.toFixed(digits)} ± ${sigma.toFixed(digits)}`;
+}
+
+/** One minus the chance that any of the stars searched, in any of its bands, would do by accident what one does. */
+export function oneMinusTrials(chance: number, evidence: StarEvidence): number {
+  const trials = Math.max(1, evidence.starsSearched * Math.max(1, evidence.changes.bands.length));
+  return Math.exp(trials * Math.log1p(-Math.min(chance, 1 - 1e-12)));
+}

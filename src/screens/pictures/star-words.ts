@@ -11,6 +11,7 @@ const SHORT_FLAGS: Readonly<Record<string, string>> = {
   'between-sequences': 'off sequence',
   'above-main-sequence': 'above dwarfs',
   'fits-none': 'fits no class',
+  'instability-strip': 'may pulsate',
 };
 
 /** A flag in at most 14 characters: 'white dwarf', 'off sequence'. */

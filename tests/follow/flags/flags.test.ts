@@ -18,6 +18,12 @@ const white: StarEvidence = {
   whiteDwarfAbsMag: 11.2,
   subtype: Number.NaN,
   subtypeSigma: Number.NaN,
+  teff_K: 11_000,
+  teffSigma_K: 500,
+  logLuminosity: -2.6,
+  properMotion_masPerYr: Number.NaN,
+  fitModulus_mag: 4.6,
+  fitModulusSigma_mag: 0.05,
   distance: 'parallax',
   parallax_mas: 12.1,
   parallaxSigma_mas: 0.3,
@@ -26,7 +32,7 @@ const white: StarEvidence = {
   turnOffAbsMag: Number.NaN,
   readings: 4,
   suspectReadings: 0,
-  changes: [],
+  changes: { bands: [], paired: undefined },
   starsSearched: 1000,
 };
 
@@ -117,6 +123,8 @@ describe('flags', () => {
     band: 'V' as const,
     readings: 18,
     scatterChance: 1e-12,
+    orderChance: 0.3,
+    interquartileRange_mag: 0.2,
     reducedChi2: 9,
     range_mag: 0.5,
     change_mag: 0.45,
@@ -125,12 +133,16 @@ describe('flags', () => {
     to_ms: Date.UTC(2026, 10, 8, 23, 40),
   };
   const dwarf = { ...white, odds: odds({ V: 1 }) };
+  const restless = (...bands: (typeof change)[]): StarEvidence => ({
+    ...dwarf,
+    changes: { bands, paired: undefined },
+  });
 
   it('faded and brightened carry the sign, and take the place of variable', () => {
-    expect(codes({ ...dwarf, changes: [change] })).toEqual(['faded']);
-    expect(codes({ ...dwarf, changes: [{ ...change, change_mag: -0.45 }] })).toEqual(['brightened']);
-    expect(codes({ ...dwarf, changes: [{ ...change, change_mag: 0.02 }] })).toEqual(['variable']);
-    const { flags } = raiseFlags({ ...dwarf, changes: [change] }, DEFAULT_FLAGS);
+    expect(codes(restless(change))).toEqual(['faded']);
+    expect(codes(restless({ ...change, change_mag: -0.45 }))).toEqual(['brightened']);
+    expect(codes(restless({ ...change, change_mag: 0.02 }))).toEqual(['variable']);
+    const { flags } = raiseFlags(restless(change), DEFAULT_FLAGS);
     expect(flags[0].because).toBe(
       '0.45 ± 0.03 mag fainter in V than at 19:10 UT (15 sigma, 18 readings to 23:40 UT)',
     );
@@ -138,7 +150,78 @@ describe('flags', () => {
 
   it('chance alone, among many stars, raises nothing', () => {
     const luck = { ...change, change_mag: 0.12, changeSigma_mag: 0.03, scatterChance: 1e-5 };
-    expect(codes({ ...dwarf, changes: [luck] })).toEqual([]);
+    expect(codes(restless(luck))).toEqual([]);
+  });
+
+  it('variable: order in time and both bands together can carry what scatter alone does not', () => {
+    const slight = { ...change, change_mag: 0.02, scatterChance: 1e-4, orderChance: 0.5 };
+    const paired = { bands: ['V', 'B'] as const, pairs: 12, stetsonJ: 2.4, chance: 1e-12 };
+    expect(codes(restless(slight))).toEqual([]);
+    expect(codes(restless({ ...slight, orderChance: 1e-8 }))).toEqual(['variable']);
+    const { flags } = raiseFlags({ ...dwarf, changes: { bands: [slight], paired } }, DEFAULT_FLAGS);
+    expect(flags[0].because).toBe(
+      'V ranges over 0.50 mag in 18 readings (middle half 0.20), reduced chi-square 9.0, V and B together by J 2.40 of 12 pairs; chance of that below 1e-9',
+    );
+    expect(codes(restless({ ...change, change_mag: 0.02, range_mag: 0.09 }))).toEqual([]);
+  });
+
+  it('colour-changed: one band fades more than the other', () => {
+    const inB = { ...change, band: 'B' as const, change_mag: 0.7, changeSigma_mag: 0.02 };
+    const inV = { ...change, change_mag: 0.45, changeSigma_mag: 0.02 };
+    const evidence = restless(inV as typeof change, inB as unknown as typeof change);
+    expect(codes(evidence)).toEqual(['faded', 'colour-changed']);
+    const { flags } = raiseFlags(evidence, DEFAULT_FLAGS);
+    expect(flags[1].because).toBe('B-V 0.25 ± 0.03 mag redder than at 19:10 UT (9 sigma)');
+    const alike = { ...inB, change_mag: 0.5 } as unknown as typeof change;
+    expect(codes(restless(inV as typeof change, alike))).toEqual(['faded']);
+  });
+});
+
+describe('motion and pulsation', () => {
+  const dwarf = { ...white, odds: odds({ V: 1 }) };
+
+  it('high-velocity: above 200 km/s across the sky, whatever the colour', () => {
+    // 4.74 km/s for 1 arcsec/yr at 1 pc: at 83 pc 600 mas/yr are 236 km/s.
+    const fast = { ...dwarf, properMotion_masPerYr: 600 };
+    expect(codes(fast)).toEqual(['high-velocity']);
+    expect(codes({ ...fast, colour: Number.NaN })).toEqual(['high-velocity']);
+    expect(codes({ ...fast, properMotion_masPerYr: 490 })).toEqual([]);
+    expect(codes({ ...fast, distance: 'none' })).toEqual([]);
+    expect(raiseFlags(fast, DEFAULT_FLAGS).flags[0].because).toMatch(
+      /^600 mas\/yr at 83 pc are 237 km\/s across the sky; odds 1\.00 of more than 200 km\/s/,
+    );
+  });
+
+  it('instability-strip: a luminous star between the edges; a faint one only when it is restless', () => {
+    const cepheid = {
+      ...dwarf,
+      odds: odds({ II: 0.5, V: 0.5 }),
+      logLuminosity: 3.5,
+      teff_K: 5700,
+      teffSigma_K: 100,
+    };
+    expect(codes(cepheid)).toEqual(['instability-strip']);
+    // Edges at log L 3.5: 5100 and 6210 K (loci.csv).
+    expect(codes({ ...cepheid, teff_K: 6500 })).toEqual([]);
+    expect(codes({ ...cepheid, teff_K: 4900 })).toEqual([]);
+    const aStar = { ...dwarf, logLuminosity: 1.2, teff_K: 7500, teffSigma_K: 150 };
+    expect(codes(aStar)).toEqual([]);
+    const hint = {
+      band: 'V' as const,
+      readings: 12,
+      scatterChance: 1e-4,
+      orderChance: 0.5,
+      reducedChi2: 3,
+      range_mag: 0.05,
+      interquartileRange_mag: 0.02,
+      change_mag: 0.01,
+      changeSigma_mag: 0.01,
+      from_ms: 0,
+      to_ms: 1,
+    };
+    expect(codes({ ...aStar, changes: { bands: [hint], paired: undefined } })).toEqual(['instability-strip']);
+    const calm = { ...hint, scatterChance: 0.005 };
+    expect(codes({ ...aStar, changes: { bands: [calm], paired: undefined } })).toEqual([]);
   });
 });
 

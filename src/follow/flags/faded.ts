@@ -1,0 +1,5 @@
+import { judgeDrift } from './drift.js';
+import type { FlagRule } from './rule.js';
+
+/** The star ended the night fainter than it began it, by at least 0.1 mag (drift.ts). */
+export const faded: FlagRule = { code: 'faded', judge: evidence => judgeDrift(evidence, 1) };
