@@ -1,4 +1,4 @@
-import type { Random } from './random.js';
+import type { Random } from '../../src/science/random.js';
 import { SCENARIO } from './scenario.js';
 import type { DemoStar } from './star.js';
 

@@ -1,8 +1,8 @@
 import { BAND_INDEX } from '../../src/science/bands.js';
+import type { Random } from '../../src/science/random.js';
 import { readTracks } from '../../src/science/tracks/index.js';
 import type { Track, TrackPoint } from '../../src/science/tracks/track.js';
 import { member } from './populations.js';
-import type { Random } from './random.js';
 import { anywhere, type DemoStar, placed, randomMotion } from './star.js';
 
 /** A star worth finding, with the flag that should find it. */

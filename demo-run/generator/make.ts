@@ -1,7 +1,7 @@
+import { Random } from '../../src/science/random.js';
 import { type Exposure, exposures, frameTable } from './frames.js';
 import { hiddenStars } from './hidden.js';
 import { backgroundStars, clusterStars, ordinaryNodes } from './populations.js';
-import { Random } from './random.js';
 import { SCENARIO } from './scenario.js';
 import type { DemoStar } from './star.js';
 

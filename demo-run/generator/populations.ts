@@ -1,9 +1,9 @@
 import { BAND_INDEX } from '../../src/science/bands.js';
 import { CLASSES } from '../../src/science/classes.js';
+import { coneVolume, drawDistance_pc } from '../../src/science/distance/draw-distance.js';
 import { makeNodes, type Node } from '../../src/science/odds/nodes.js';
+import type { Random } from '../../src/science/random.js';
 import { readTracks } from '../../src/science/tracks/index.js';
-import { coneVolume, drawDistance_pc } from './draw-distance.js';
-import type { Random } from './random.js';
 import { SCENARIO } from './scenario.js';
 import { anywhere, type DemoStar, placed, randomMotion } from './star.js';
 

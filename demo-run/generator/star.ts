@@ -1,4 +1,4 @@
-import type { Random } from './random.js';
+import type { Random } from '../../src/science/random.js';
 import { AB_PER_AV, SCENARIO } from './scenario.js';
 
 /** One invented star, as it would look from above the atmosphere without noise. */

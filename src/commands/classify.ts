@@ -1,15 +1,13 @@
-import { basename, resolve } from 'node:path';
-import { formatProblem, makeProblem, type Problem } from '../catalogue/problems.js';
-import { safeText } from '../catalogue/safe-text.js';
-import { NightEngine, type NightFile } from '../night/engine.js';
+import { formatProblem, type Problem } from '../catalogue/problems.js';
+import { NightEngine } from '../night/engine.js';
 import { FollowUpDesk } from '../night/follow-up.js';
-import { isRefusal, readWhole } from '../night/watcher/safe-file.js';
 import { EXIT, UsageError } from './exit-codes.js';
 import type { CommandIo } from './io.js';
 import { profileFor } from './load-profile.js';
 import { explain } from './output/explanation.js';
 import { FORMATS } from './output/formats.js';
 import { RecordMaker } from './output/star-record.js';
+import { readFiles } from './read-files.js';
 
 interface ClassifyOptions {
   readonly profile?: string;
@@ -29,24 +27,13 @@ export async function classifyCommand(
   io: CommandIo,
 ): Promise<number> {
   const engine = new NightEngine(profileFor(options.profile, io));
-  const problems: Problem[] = [];
-  const outcomes = await engine.absorbAll(readFiles(files, problems));
-  problems.push(...outcomes.flatMap(outcome => outcome.problems));
+  const refused: Problem[] = [];
+  const outcomes = await engine.absorbAll(readFiles(files, io, refused));
+  const problems = outcomes.flatMap(outcome => outcome.problems);
   for (const problem of problems) io.err(`${formatProblem(problem)}\n`);
   if (options.explain === undefined) await printStars(engine, options, io);
   else await io.out(`${explain(engine, starNamed(engine, options.explain)).join('\n')}\n`);
-  return problems.some(problem => problem.cost === 'file') ? EXIT.someUnreadable : EXIT.ok;
-}
-
-/** One file after another, so that only one is held at a time. Those that cannot be opened become problems. */
-async function* readFiles(paths: readonly string[], problems: Problem[]): AsyncGenerator<NightFile> {
-  for (const path of paths) {
-    const bytes = await readWhole(path);
-    if (bytes === undefined) throw new UsageError(`${path}: no such file`);
-    const name = basename(path);
-    if (isRefusal(bytes)) problems.push(makeProblem(bytes.code, safeText(name), 0, bytes.seen));
-    else yield { name, bytes, place: resolve(path) };
-  }
+  return [...refused, ...problems].some(problem => problem.cost === 'file') ? EXIT.someUnreadable : EXIT.ok;
 }
 
 function starNamed(engine: NightEngine, id: string): number {

@@ -108,6 +108,29 @@ function commandTable(io: CommandIo, finish: (code: number) => void): Command {
       finish(await profileCommand(name, options, io));
     });
 
+  program
+    .command('rehearse')
+    .description(
+      'draw made-up stars as the field would show them and print how well each flag finds its kind',
+    )
+    .argument('<name-or-file>', 'a ready profile by name, or a TOML file')
+    .argument('[files...]', 'tables of the field, whose errors are taken; without any, --depth sets them')
+    .option(
+      '--depth <mag>',
+      'magnitude at which the survey reaches a signal-to-noise ratio of 10',
+      positiveNumber,
+      18,
+    )
+    .option('--stars <number>', 'stars drawn of each kind', wholeNumber, 1000)
+    .option('--seed <number>', 'another draw', wholeNumber, 1)
+    .addOption(
+      new Option('-f, --format <format>', 'how to print').choices(['table', 'json']).default('table'),
+    )
+    .action(async (name: string, files: string[], options) => {
+      const { rehearseCommand } = await import('./rehearse.js');
+      finish(await rehearseCommand(name, files, options, io));
+    });
+
   return program;
 }
 
@@ -126,6 +149,16 @@ function glyphsOption(): Option {
 function positiveNumber(text: string): number {
   const value = Number(text);
   if (!(value > 0 && Number.isFinite(value))) throw new InvalidArgumentError('a number above 0 is needed');
+  return value;
+}
+
+const MOST = 1_000_000;
+
+function wholeNumber(text: string): number {
+  const value = Number(text);
+  if (!Number.isInteger(value) || value < 1 || value > MOST) {
+    throw new InvalidArgumentError(`a whole number from 1 to ${MOST} is needed`);
+  }
   return value;
 }
 

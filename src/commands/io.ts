@@ -4,6 +4,8 @@ import { writeSync } from 'node:fs';
 export interface CommandIo {
   readonly out: (text: string) => Promise<void> | void;
   readonly err: (text: string) => void;
+  /** Whether someone watches the messages as they come. */
+  readonly isErrTerminal: boolean;
   readonly now_ms: () => number;
   /** Folder of the profiles that come with the program. */
   readonly profilesFolder: string;
@@ -24,6 +26,7 @@ export function standardIo(profilesFolder: string): CommandIo {
         });
       }),
     err: writeError,
+    isErrTerminal: process.stderr.isTTY === true,
     now_ms: Date.now,
     profilesFolder,
   };

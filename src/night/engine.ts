@@ -1,3 +1,4 @@
+import type { FrameReadings } from '../catalogue/frame.js';
 import type { Problem } from '../catalogue/problems.js';
 import { readFrame } from '../catalogue/read-frame.js';
 import { StarCatalogue } from '../catalogue/stars.js';
@@ -100,6 +101,11 @@ export class NightEngine implements NightState {
     await classifyParallel(this.model, this.inputs, this.odds);
     this.judge(everyStar(this.catalogue.count), last);
     return outcomes;
+  }
+
+  /** Takes the first frame of a night that no file holds, as a rehearsal makes it. */
+  absorbReadings(readings: FrameReadings): void {
+    this.follow(0, this.catalogue.absorb(readings, 0));
   }
 
   /** A file of the night's folder that could not even be opened. */

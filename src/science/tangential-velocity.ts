@@ -1,3 +1,5 @@
+import type { Random } from './random.js';
+
 /** Kilometres per second of one milliarcsecond per year at one kiloparsec. */
 const KM_S_PER_MAS_YR_KPC = 4.740_47;
 
@@ -53,4 +55,21 @@ export function properMotionDensity(
     density += (share * Math.exp((-0.5 * motion_masPerYr ** 2) / variance)) / (2 * Math.PI * variance);
   }
   return density;
+}
+
+/** Both components of a proper motion, drawn for a star at a distance. */
+export function drawProperMotion_masPerYr(
+  random: Random,
+  distance_pc: number,
+  kinematics: Kinematics,
+): readonly [number, number] {
+  const components = COMPONENTS[kinematics];
+  let sum = 0;
+  const sums = components.map(({ share }) => {
+    sum += share;
+    return sum;
+  });
+  const { sigma_kmPerS } = components[random.weighted(sums)];
+  const sigma = sigma_kmPerS / tangentialVelocity_kmPerS(1, distance_pc);
+  return [random.normal(0, sigma), random.normal(0, sigma)];
 }

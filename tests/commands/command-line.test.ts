@@ -34,7 +34,8 @@ describe('the command line', () => {
     expect(await run(['--version'])).toEqual({ code: 0, out: `${version}\n`, err: '' });
     const help = await run(['--help']);
     expect(help.code).toBe(0);
-    for (const command of ['watch', 'replay', 'classify', 'profile']) expect(help.out).toContain(command);
+    for (const command of ['watch', 'replay', 'classify', 'profile', 'rehearse'])
+      expect(help.out).toContain(command);
   });
 
   it.each([
@@ -45,6 +46,9 @@ describe('the command line', () => {
     [['classify', 'x.csv', '--at', 'monday 3'], /a time such as 2026-11-08T22:00Z/],
     [['classify', 'x.csv', '--at', '2026-13-08'], /a time such as 2026-11-08T22:00Z/],
     [['replay', 'demo-run', '--speed', '-3'], /a number above 0/],
+    [['rehearse', 'demo', '--stars', '1.5'], /a whole number from 1 to 1000000/],
+    [['rehearse', 'nowhere'], /no such profile/],
+    [['rehearse', 'demo', 'x.csv'], /x\.csv: no such file/],
     [['replay', 'demo-run', '--speed', 'Infinity'], /a number above 0/],
     [
       ['classify', 'x.csv'],
@@ -235,5 +239,33 @@ describe('what the program cannot help', () => {
       '$NIGHT classify $FOLDER/bad --profile demo 2>&1 >/dev/null | true; echo $PIPESTATUS',
     );
     expect(stdout).toBe('3\n');
+  });
+});
+
+describe('rehearse', () => {
+  it('prints what the flags would find, at most 80 columns wide', async () => {
+    const { code, out, err } = await run(['rehearse', 'northern-80cm', '--stars', '40', '--depth', '17']);
+    expect([code, err]).toEqual([0, '']);
+    expect(out).toMatch(/S\/N 10 at 17\.0 mag in every band/);
+    expect(out).toMatch(/white-dwarf \(threshold 0\.7\): white dwarf\n {2}found +\d\.\d\d/);
+    for (const line of out.split('\n').slice(2)) expect(line.length).toBeLessThanOrEqual(90);
+  });
+
+  it('as json, with the errors of real tables', async () => {
+    const table = file('field.csv', TABLE);
+    const { code, out } = await run([
+      'rehearse',
+      'northern-80cm',
+      table,
+      '--stars',
+      '40',
+      '--format',
+      'json',
+    ]);
+    expect(code).toBe(0);
+    const result = JSON.parse(out) as { bands: string[]; errors: string; flags: { flag: string }[] };
+    expect(result.bands).toEqual(['B', 'V']);
+    expect(result.errors).toBe('errors of 3 stars of field.csv');
+    expect(result.flags.map(({ flag }) => flag)).toContain('white-dwarf');
   });
 });

@@ -1,7 +1,6 @@
-import { coneVolume, drawDistance_pc } from '../../demo-run/generator/draw-distance.js';
-import { Random } from '../../demo-run/generator/random.js';
 import { BAND_INDEX, type Band } from '../../src/science/bands.js';
 import { CLASS_COUNT, CLASSES } from '../../src/science/classes.js';
+import { coneVolume, drawDistance_pc } from '../../src/science/distance/draw-distance.js';
 import {
   buildModel,
   classifyStars,
@@ -11,6 +10,7 @@ import {
   type StarInputs,
 } from '../../src/science/odds/index.js';
 import { makeNodes, type Node } from '../../src/science/odds/nodes.js';
+import { Random } from '../../src/science/random.js';
 import { readTracks } from '../../src/science/tracks/index.js';
 
 /** A made-up field: the local mix of stars, with scatter, dust, parallaxes and noise drawn independently. */

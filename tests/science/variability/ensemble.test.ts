@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { Random } from '../../../demo-run/generator/random.js';
+import { Random } from '../../../src/science/random.js';
 import { solveEnsemble } from '../../../src/science/variability/ensemble.js';
 
 /** Every star on every frame, with a known offset for each frame. */

@@ -1,4 +1,4 @@
-import type { Random } from './random.js';
+import type { Random } from '../random.js';
 
 /** Integral of r^2 exp(-r/L) from 0 to r. */
 export function coneVolume(r: number, scale: number): number {
