@@ -3,7 +3,7 @@ import type { Conditions, ExposureSuggestion } from '../follow/exposure/suggesti
 import { skyBrightness_magPerArcsec2 } from '../follow/sky/sky-light.js';
 import type { StarTonight, TargetWindow } from '../follow/sky/window.js';
 import type { Band } from '../science/bands.js';
-import { PosteriorReader } from '../science/odds/index.js';
+import { type ClassEvidence, PosteriorReader } from '../science/odds/index.js';
 import { airmass } from '../science/sky/airmass.js';
 import { MeasuredConditions } from './measured-conditions.js';
 import type { NightState } from './night-state.js';
@@ -42,6 +42,11 @@ export class FollowUpDesk {
     const exposures = this.adviser.suggest(this.current().reader.predicted(star), conditions);
     const first = exposures.find(exposure => exposure.possible);
     return { exposures, window: sky.windowFor(tonight, first?.total_s ?? 0) };
+  }
+
+  /** What each class would have the star be. */
+  evidenceOf(star: number): readonly ClassEvidence[] {
+    return this.current().reader.evidence(star);
   }
 
   /** Tonight's seeing, cloud and sky from the frames. */

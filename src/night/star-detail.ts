@@ -24,6 +24,7 @@ export function starDetail(night: NightState, desk: FollowUpDesk, star: number, 
     spectralType: spectralTypeText(odds.odds, index, odds.subtype[star], odds.teff_K[star]),
     luminosityClass: CLASSES[odds.classIndex[star]],
     odds: oddsOf(odds.odds, star),
+    evidence: desk.evidenceOf(star),
     mags: inputs.bands
       .map((band, b) => ({
         band,

@@ -4,7 +4,7 @@ import type { RaisedFlag } from '../follow/flags/index.js';
 import type { TargetWindow } from '../follow/sky/window.js';
 import type { Band } from '../science/bands.js';
 import type { StarClass } from '../science/classes.js';
-import type { DiagramAxes, TrackLine } from '../science/odds/index.js';
+import type { ClassEvidence, DiagramAxes, TrackLine } from '../science/odds/index.js';
 
 /** What the screens know of the night: made in the worker, sent whole, never changed afterwards. */
 export interface NightView {
@@ -111,6 +111,8 @@ export interface StarDetail {
     readings: number;
     scatter_mag: number;
   }[];
+  /** What each class would have the star be, most probable first. */
+  readonly evidence: readonly ClassEvidence[];
   readonly absMag: { band: Band; value: number; sigma: number };
   readonly teff_K: number;
   readonly teffSigma_K: number;

@@ -318,6 +318,32 @@ export function starDetail(view: NightView, place = 0): StarDetail {
     distanceHigh_pc: 177.6,
     extinction_AV: 0.08,
     extinctionSigma_AV: 0.04,
+    evidence: [
+      {
+        starClass: 'WD',
+        odds: 0.99,
+        subtype: Number.NaN,
+        teff_K: 16_500,
+        modulus_mag: 6.2,
+        extinction_AV: 0.08,
+        misfits: [
+          { band: 'B', sigma: 0.3 },
+          { band: 'V', sigma: -0.4 },
+        ],
+      },
+      {
+        starClass: 'sdOB',
+        odds: 0.01,
+        subtype: 12,
+        teff_K: 24_000,
+        modulus_mag: 6.3,
+        extinction_AV: 0.31,
+        misfits: [
+          { band: 'B', sigma: 4.1 },
+          { band: 'V', sigma: -3.9 },
+        ],
+      },
+    ],
     logLuminosity: -1.62,
     logLuminositySigma: 0.05,
     parallax_mas: 5.71,

@@ -5,6 +5,7 @@ import { stellarRadius } from '../../science/luminosity.js';
 import { glyphsOf } from '../terminal/glyphs.js';
 import { Grid } from '../terminal/grid.js';
 import type { GlyphName } from '../terminal/look.js';
+import { evidenceLines } from './evidence-lines.js';
 import { lightCurvePicture } from './light-curve.js';
 import { oddsBars } from './odds-bars.js';
 import { dim, type Line, pageOf, plain, title } from './parts.js';
@@ -37,7 +38,13 @@ export function starPage(
     [],
   ];
   const half = Math.floor((width - COLUMN_GAP) / 2);
-  const left = [...oddsLines(detail, half, glyphs), [], ...numbers(detail, glyphs)];
+  const left = [
+    ...oddsLines(detail, half, glyphs),
+    [],
+    ...numbers(detail, glyphs),
+    [],
+    ...evidenceLines(detail.evidence, half),
+  ];
   const magnitudes = magnitudeLines(detail, glyphs);
   const curveRows = Math.min(
     MOST_CURVE_ROWS,
