@@ -1,3 +1,4 @@
+import { scoreBrightStars } from '../support/luminosity-groups.js';
 import { BV_AXES, GAIA_AXES, OPEN_FIELD } from '../support/star-inputs.js';
 import { calibrate, drawField } from '../support/synthetic-field.js';
 
@@ -61,3 +62,11 @@ for (const { name, axes, ...plan } of FIELDS) {
     `  right by class: ${classes.map(({ name: c, right, stars }) => `${c} ${right}/${stars}`).join(', ')}\n`,
   );
 }
+
+const bright = scoreBrightStars();
+console.log(
+  `real bright stars, B V and parallax: right luminosity group ${bright.right} of ${bright.stars} (${((100 * bright.right) / bright.stars).toFixed(0)} %), stated ${(100 * bright.stated).toFixed(0)} %`,
+);
+console.log(
+  `  right by group: ${[...bright.byGroup].map(([group, { stars, right }]) => `${group} ${right}/${stars}`).join(', ')}`,
+);

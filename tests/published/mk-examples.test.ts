@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest';
-import { CLASSES, type StarClass } from '../../src/science/classes.js';
+import { CLASSES } from '../../src/science/classes.js';
 import { subtypeNumber } from '../../src/science/spectral-subtype.js';
 import { parseTable, type Row } from '../../src/science/table.js';
+import { publishedSteps, step } from '../support/luminosity-groups.js';
 import { BV_AXES, classifyAll, GAIA_AXES, type TestStar } from '../support/star-inputs.js';
 import examplesText from './data/mk_examples.csv';
 
@@ -10,26 +11,6 @@ import examplesText from './data/mk_examples.csv';
  * 2024): sources row by row in data/mk_examples.csv.
  */
 const rows = parseTable(examplesText).rows;
-/** One step on this ladder is one luminosity class; the supergiant subclasses count as one. */
-const LADDER: readonly (readonly StarClass[])[] = [['V', 'sd'], ['IV'], ['III'], ['II'], ['Ib', 'Iab', 'Ia']];
-
-function step(starClass: StarClass): number {
-  return LADDER.findIndex(classes => classes.includes(starClass));
-}
-
-/** Published luminosity classes of a type such as 'G2Ib-IIa' or 'K3II-III', as steps. */
-function publishedSteps(type: string): number[] {
-  const luminosity = type.replace(/^[A-Z][0-9.+-]*(If)?/, '');
-  const steps = [
-    /(^|[^IV])V/.test(luminosity) ? 0 : -1,
-    /IV/.test(luminosity) ? 1 : -1,
-    /III/.test(luminosity) ? 2 : -1,
-    /(^|[^I])II($|[^I])/.test(luminosity) ? 3 : -1,
-    /(^|[^I])I[abf]|If/.test(type) ? 4 : -1,
-  ];
-  return steps.filter(s => s >= 0);
-}
-
 /**
  * The honest exceptions, each with its reason.
  *
