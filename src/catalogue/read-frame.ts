@@ -4,7 +4,7 @@ import type { BandColumn, FrameReadings } from './frame.js';
 import type { InputSettings } from './input-settings.js';
 import { LIMITS } from './limits.js';
 import { type Problem, ProblemList } from './problems.js';
-import { readTextTable } from './readers/text-table.js';
+import { readSheet } from './readers/read-sheet.js';
 import { BandNames } from './readings/band-name.js';
 import type { Draft } from './readings/draft.js';
 import { readFacts } from './readings/facts.js';
@@ -25,12 +25,12 @@ export interface ReadFrame {
 }
 
 /** Reads one photometry file. `name` is its name for people, and may hold a band as in 'M67_V_003.csv'. */
-export function readFrame(name: string, bytes: Uint8Array, input: InputSettings): ReadFrame {
+export async function readFrame(name: string, bytes: Uint8Array, input: InputSettings): Promise<ReadFrame> {
   const file = safeText(name, LIMITS.fileName_characters);
   const problems = new ProblemList(file);
   const recogniser = new Recogniser(input);
   const options = { use: recogniser.use.bind(recogniser), missing: input.missing };
-  const sheet = readTextTable(bytes, options, problems);
+  const sheet = await readSheet(bytes, options, problems);
   const frame = sheet && frameOfSheet(file, sheet, input, recogniser, problems);
   return { frame, problems: problems.all() };
 }

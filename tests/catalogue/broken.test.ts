@@ -54,9 +54,9 @@ describe('broken files', () => {
     expect(Object.keys(PROBLEM_CODES).filter(code => !covered.has(code))).toEqual(NOT_HERE);
   });
 
-  it.each(Object.entries(BROKEN))('%s', (name, [rows, ...phrases]) => {
+  it.each(Object.entries(BROKEN))('%s', async (name, [rows, ...phrases]) => {
     const input = name.startsWith('missing-column') ? { ...INPUT, columns: { flag: 'QUALITY' } } : INPUT;
-    const { frame, problems } = readFrame(name, readFileSync(new URL(name, FOLDER)), input);
+    const { frame, problems } = await readFrame(name, readFileSync(new URL(name, FOLDER)), input);
     expect(frame?.rows ?? 0).toBe(rows);
     if (frame === undefined) expect(problems.some(problem => problem.cost === 'file')).toBe(true);
     expect(problems.map(problem => problem.code)).toContain(name.split('.')[0]);

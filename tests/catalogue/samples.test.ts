@@ -28,11 +28,11 @@ function expectNumbers(actual: ArrayLike<number>, expected: Numbers): void {
   });
 }
 
-describe.each(TABLES)('%s', table => {
+describe.each(TABLES)('%s', async table => {
   const expected = JSON.parse(
     readFileSync(new URL(table.replace(/\.\w+$/, '.json'), FOLDER), 'utf8'),
   ) as Expected;
-  const result = readFrame(table, readFileSync(new URL(table, FOLDER)), INPUT);
+  const result = await readFrame(table, readFileSync(new URL(table, FOLDER)), INPUT);
   const frame = result.frame as FrameReadings;
 
   it('gives the expected rows', () => {

@@ -1,0 +1,12 @@
+import type { ProblemList } from '../problems.js';
+import type { ReadOptions, Sheet } from '../sheet.js';
+import { readTextTable } from './text-table.js';
+
+/** Reads a table of any known format, told by its first bytes. */
+export async function readSheet(
+  bytes: Uint8Array,
+  options: ReadOptions,
+  problems: ProblemList,
+): Promise<Sheet | undefined> {
+  return readTextTable(bytes, options, problems);
+}
