@@ -112,13 +112,13 @@ export class NightEngine implements NightState {
     bytes,
     place,
   }: NightFile): Promise<FileOutcome & { readonly stars: Uint32Array }> {
-    const { frame, problems } = await readFrame(name, bytes, this.profile.input);
+    const { content, frame, problems } = await readFrame(name, bytes, this.profile.input);
     if (frame === undefined) {
       // An earlier frame under this name stays: it was good.
       this.book.set(place, problems);
       return { name, kind: 'refused', frame: -1, problems, stars: NO_STARS };
     }
-    const fate = this.log.decide(place, bytes);
+    const fate = this.log.decide(place, content);
     if (fate.kind === 'known') return { name, kind: 'known', ...this.repeated(place, fate.freed) };
     this.book.set(place, problems);
     if (fate.kind === 'unchanged') return { name, kind: 'unchanged', frame: -1, problems, stars: NO_STARS };

@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
+import { gzipSync } from 'node:zlib';
 import { describe, expect, it } from 'vitest';
 import { type FileOutcome, NightEngine } from '../../src/night/engine.js';
 import { FollowUpDesk } from '../../src/night/follow-up.js';
@@ -78,6 +79,13 @@ describe('a night of three stars', () => {
     expect(outcomes.map(({ kind }) => kind)).toEqual(['read', 'known', 'unchanged']);
     expect(view.duplicates).toBe(1);
     expect(view.stars.readings[0]).toBe(1);
+  });
+
+  it('counts a table and its compressed copy once', async () => {
+    const { engine } = await night(['v.csv', frame('V', V)]);
+    const copy = await engine.absorb('v.csv.gz', gzipSync(bytes(frame('V', V))));
+    expect(copy.kind).toBe('known');
+    expect(engine.catalogue.readings[0]).toBe(1);
   });
 
   it('a re-reduction replaces its earlier frame, and the means follow', async () => {

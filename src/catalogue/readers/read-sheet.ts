@@ -1,5 +1,7 @@
 import type { ProblemList } from '../problems.js';
 import type { ReadOptions, Sheet } from '../sheet.js';
+import { isFits } from './file-kind.js';
+import { readFits } from './fits/read-fits.js';
 import { readTextTable } from './text-table.js';
 
 /** Reads a table of any known format, told by its first bytes. */
@@ -8,5 +10,6 @@ export async function readSheet(
   options: ReadOptions,
   problems: ProblemList,
 ): Promise<Sheet | undefined> {
+  if (isFits(bytes)) return readFits(bytes, options, problems);
   return readTextTable(bytes, options, problems);
 }

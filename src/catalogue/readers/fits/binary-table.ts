@@ -1,0 +1,124 @@
+import { LIMITS } from '../../limits.js';
+import type { ProblemList } from '../../problems.js';
+import { type SafeText, safeText } from '../../safe-text.js';
+import { CellDecoder, type ReadOptions, type SheetColumn } from '../../sheet.js';
+import { BATCH_ROWS, type FillRows, fillBits, filler, fillLogical } from './binary-numbers.js';
+import type { BinaryFormat } from './formats.js';
+import type { BinaryLayout, FitsColumn } from './layout.js';
+
+type Column = FitsColumn<BinaryFormat>;
+
+interface Filling {
+  readonly column: Column;
+  readonly values: Float64Array;
+  readonly fill: FillRows;
+}
+
+/** Reads the columns that are wanted of a binary table (FITS Standard 4.0, 7.3). */
+export class BinaryTableReader {
+  private readonly cells = new CellDecoder();
+
+  constructor(
+    private readonly bytes: Uint8Array,
+    private readonly layout: BinaryLayout,
+    private readonly rows: number,
+  ) {}
+
+  read(options: ReadOptions, problems: ProblemList): SheetColumn[] {
+    const columns: SheetColumn[] = [];
+    const fillings: Filling[] = [];
+    for (const column of this.layout.columns) {
+      const use = options.use(column.head);
+      if (use === 'skip' || column.format.repeat === 0) continue;
+      const { head, format } = column;
+      if (!hasOneValue(format)) {
+        problems.add('many-values', 0, `'${head.name}' is ${describe(format)}, expected one value a row`);
+      } else if (format.type === 'A') {
+        columns.push({ ...head, kind: 'text', text: row => this.word(column, row) });
+      } else if (format.type === 'K' && use === 'text') {
+        columns.push({ ...head, kind: 'text', text: row => this.wholeNumber(column, row) });
+      } else {
+        const values = new Float64Array(this.rows);
+        fillings.push({ column, values, fill: this.fillerOf(format) });
+        if (use === 'value') columns.push({ ...head, kind: 'number', values });
+        else columns.push({ ...head, kind: 'text', text: row => numberText(values[row]) });
+      }
+    }
+    this.fill(fillings);
+    return columns;
+  }
+
+  /** Batch by batch through all columns, so that the table's bytes are fetched from memory once. */
+  private fill(fillings: readonly Filling[]): void {
+    for (let from = 0; from < this.rows; from += BATCH_ROWS) {
+      const to = Math.min(this.rows, from + BATCH_ROWS);
+      for (const { column, values, fill } of fillings) {
+        fill(values, from, to, this.place(column, from), this.layout.rowBytes);
+        makeValues(column, values, from, to);
+      }
+    }
+  }
+
+  private fillerOf({ type, repeat }: BinaryFormat): FillRows {
+    if (type === 'L') return fillLogical(this.bytes, repeat);
+    if (type === 'X') return fillBits(this.bytes, repeat);
+    return filler(type as 'B', this.bytes);
+  }
+
+  private place({ start }: Column, row: number): number {
+    return this.layout.unit.dataStart + row * this.layout.rowBytes + start;
+  }
+
+  /** A string ends at its first zero byte; blanks at its end fill it up. */
+  private word(column: Column, row: number): SafeText {
+    const start = this.place(column, row);
+    const width = Math.min(column.format.bytes, LIMITS.cell_bytes);
+    const zero = this.bytes.subarray(start, start + width).indexOf(0);
+    return safeText(this.cells.text(this.bytes, start, zero < 0 ? width : zero).trimEnd());
+  }
+
+  /** All digits of a 64-bit number, as an identifier needs them. */
+  private wholeNumber(column: Column, row: number): SafeText {
+    const { scale, zero, missing } = column;
+    const p = this.place(column, row);
+    let bits = 0n;
+    for (let i = 0; i < 8; i++) bits = (bits << 8n) | BigInt(this.bytes[p + i]);
+    const stored = BigInt.asIntN(64, bits);
+    if (missing !== '' && String(stored) === missing) return safeText('');
+    if (scale === 1 && Number.isInteger(zero)) return safeText(String(stored + BigInt(zero)));
+    return numberText(Number(stored) * scale + zero);
+  }
+}
+
+/** Strings, flags and bits are one value however long they are; several numbers, complex ones and lists are not. */
+function hasOneValue({ type, repeat }: BinaryFormat): boolean {
+  if (type === 'A' || type === 'L' || type === 'X') return true;
+  return repeat === 1 && 'BIJKED'.includes(type);
+}
+
+function describe({ type, repeat }: BinaryFormat): string {
+  if (type === 'P' || type === 'Q') return 'a list of varying length';
+  if (type === 'C' || type === 'M') return 'of complex numbers';
+  return `an array of ${repeat}`;
+}
+
+/** What is stored becomes a value: none where it is set aside for that or not finite, else scaled. */
+function makeValues(
+  { format, scale, zero, missing }: Column,
+  values: Float64Array,
+  from: number,
+  to: number,
+) {
+  if (missing !== '' && 'BIJK'.includes(format.type)) {
+    const none = Number(missing);
+    for (let row = from; row < to; row++) if (values[row] === none) values[row] = Number.NaN;
+  }
+  const isScaled = (scale !== 1 || zero !== 0) && 'BIJKED'.includes(format.type);
+  if (isScaled) for (let row = from; row < to; row++) values[row] = values[row] * scale + zero;
+  if (!isScaled && !'ED'.includes(format.type)) return;
+  for (let row = from; row < to; row++) if (!Number.isFinite(values[row])) values[row] = Number.NaN;
+}
+
+function numberText(value: number): SafeText {
+  return safeText(Number.isNaN(value) ? '' : String(value));
+}
