@@ -39,7 +39,7 @@ export class BinaryTableReader {
         columns.push({ ...head, kind: 'text', text: row => this.wholeNumber(column, row) });
       } else {
         const values = new Float64Array(this.rows);
-        fillings.push({ column, values, fill: this.fillerOf(format) });
+        fillings.push({ column, values, fill: this.fillerOf(format, values) });
         if (use === 'value') columns.push({ ...head, kind: 'number', values });
         else columns.push({ ...head, kind: 'text', text: row => numberText(values[row]) });
       }
@@ -53,16 +53,16 @@ export class BinaryTableReader {
     for (let from = 0; from < this.rows; from += BATCH_ROWS) {
       const to = Math.min(this.rows, from + BATCH_ROWS);
       for (const { column, values, fill } of fillings) {
-        fill(values, from, to, this.place(column, from), this.layout.rowBytes);
+        fill(from, to, this.place(column, from), this.layout.rowBytes);
         makeValues(column, values, from, to);
       }
     }
   }
 
-  private fillerOf({ type, repeat }: BinaryFormat): FillRows {
-    if (type === 'L') return fillLogical(this.bytes, repeat);
-    if (type === 'X') return fillBits(this.bytes, repeat);
-    return filler(type as 'B', this.bytes);
+  private fillerOf({ type, repeat }: BinaryFormat, out: Float64Array): FillRows {
+    if (type === 'L') return fillLogical(this.bytes, out, repeat);
+    if (type === 'X') return fillBits(this.bytes, out, repeat);
+    return filler(type as 'B', this.bytes, out);
   }
 
   private place({ start }: Column, row: number): number {

@@ -3,7 +3,7 @@ import { asciiText } from '../parse-number.js';
 
 /** FITS Standard 4.0, 3.1 and 4.1: everything comes in blocks, headers in cards. */
 export const BLOCK_BYTES = 2880;
-const CARD_BYTES = 80;
+export const CARD_BYTES = 80;
 
 /** Keywords in capitals with their bare values; of a repeated keyword the first counts. */
 export class FitsHeader {
