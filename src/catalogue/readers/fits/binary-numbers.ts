@@ -4,66 +4,51 @@ export const BATCH_ROWS = 4096;
 /** Fills rows [from, to) of one column: `place` is the cell of row `from` in the table, `step` a row's bytes. */
 export type FillRows = (from: number, to: number, place: number, step: number) => void;
 
-/** Which of its two words is the low one of an eight-byte number on this machine. */
-const LOW_WORD = new Uint8Array(Uint32Array.of(1).buffer)[0] === 1 ? 0 : 1;
-
-/** The stored numbers of one type, most significant byte first (FITS Standard 4.0, 5.2 and 5.3), as doubles. */
+/**
+ * The stored numbers of one type, most significant byte first (FITS Standard 4.0, 5.2 and 5.3), as doubles; what is
+ * not finite is none. A loop for each type, since a call for each cell would cost more than the cell; views of the
+ * bytes were measured to be faster here than words put together by shifts.
+ */
 export function filler(
   type: 'B' | 'I' | 'J' | 'K' | 'E' | 'D',
   bytes: Uint8Array,
   out: Float64Array,
 ): FillRows {
+  const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
   switch (type) {
     case 'B':
       return (from, to, place, step) => {
-        for (let row = from, p = place; row < to; row++, p += step) out[row] = bytes[p];
+        for (let row = from, p = place; row < to; row++, p += step) out[row] = view.getUint8(p);
       };
     case 'I':
       return (from, to, place, step) => {
-        for (let row = from, p = place; row < to; row++, p += step) {
-          out[row] = ((bytes[p] << 24) >> 16) | bytes[p + 1];
-        }
+        for (let row = from, p = place; row < to; row++, p += step) out[row] = view.getInt16(p);
       };
     case 'J':
       return (from, to, place, step) => {
-        for (let row = from, p = place; row < to; row++, p += step) out[row] = word(bytes, p);
+        for (let row = from, p = place; row < to; row++, p += step) out[row] = view.getInt32(p);
       };
     case 'K':
       return (from, to, place, step) => {
         for (let row = from, p = place; row < to; row++, p += step) {
-          out[row] = word(bytes, p) * 2 ** 32 + (word(bytes, p + 4) >>> 0);
+          out[row] = view.getInt32(p) * 2 ** 32 + view.getUint32(p + 4);
         }
       };
     case 'E':
-      return fillSingles(bytes, out);
+      return (from, to, place, step) => {
+        for (let row = from, p = place; row < to; row++, p += step) {
+          const value = view.getFloat32(p);
+          out[row] = value - value === 0 ? value : Number.NaN;
+        }
+      };
     case 'D':
-      return fillDoubles(bytes, out);
+      return (from, to, place, step) => {
+        for (let row = from, p = place; row < to; row++, p += step) {
+          const value = view.getFloat64(p);
+          out[row] = value - value === 0 ? value : Number.NaN;
+        }
+      };
   }
-}
-
-function word(bytes: Uint8Array, p: number): number {
-  return (bytes[p] << 24) | (bytes[p + 1] << 16) | (bytes[p + 2] << 8) | bytes[p + 3];
-}
-
-/** Bit patterns are put together as whole words and read back as what they mean: no call for each cell. */
-function fillSingles(bytes: Uint8Array, out: Float64Array): FillRows {
-  const words = new Int32Array(Math.min(BATCH_ROWS, out.length));
-  const singles = new Float32Array(words.buffer);
-  return (from, to, place, step) => {
-    const count = to - from;
-    for (let i = 0, p = place; i < count; i++, p += step) words[i] = word(bytes, p);
-    for (let i = 0; i < count; i++) out[from + i] = singles[i];
-  };
-}
-
-function fillDoubles(bytes: Uint8Array, out: Float64Array): FillRows {
-  const words = new Int32Array(out.buffer, out.byteOffset, 2 * out.length);
-  return (from, to, place, step) => {
-    for (let row = from, p = place; row < to; row++, p += step) {
-      words[2 * row + 1 - LOW_WORD] = word(bytes, p);
-      words[2 * row + LOW_WORD] = word(bytes, p + 4);
-    }
-  };
 }
 
 const TRUE = 84;

@@ -113,10 +113,11 @@ function makeValues(
     const none = Number(missing);
     for (let row = from; row < to; row++) if (values[row] === none) values[row] = Number.NaN;
   }
-  const isScaled = (scale !== 1 || zero !== 0) && 'BIJKED'.includes(format.type);
-  if (isScaled) for (let row = from; row < to; row++) values[row] = values[row] * scale + zero;
-  if (!isScaled && !'ED'.includes(format.type)) return;
-  for (let row = from; row < to; row++) if (!Number.isFinite(values[row])) values[row] = Number.NaN;
+  if ((scale === 1 && zero === 0) || !'BIJKED'.includes(format.type)) return;
+  for (let row = from; row < to; row++) {
+    const value = values[row] * scale + zero;
+    values[row] = Number.isFinite(value) ? value : Number.NaN;
+  }
 }
 
 function numberText(value: number): SafeText {
