@@ -134,6 +134,24 @@ describe('FITS tables', () => {
     expect(problems.map(({ code }) => code)).toEqual(['damaged']);
   });
 
+  it.each(['TBCOL2  = 0', 'TBCOL2  = -1', 'COMMENT'])(
+    'of letters need the place of each column: %s',
+    place => {
+      const cards = [...tableCards('TABLE', 4, 1, 'A1', 'A1'), 'TBCOL1  = 1', place];
+      const { sheet, problems } = sheetOf(fits(cards, 'abcd'));
+      expect(sheet).toBeUndefined();
+      expect(problems[0].text).toMatch(/^TBCOL2 is '[-0-9]*', expected the place of a column/);
+    },
+  );
+
+  it('of which the first holds lists only are passed over for one with values', () => {
+    const lists = fits(tableCards('BINTABLE', 16, 1, '2E', 'PE(9)'), '');
+    const values = fits(tableCards('BINTABLE', 2, 1, 'B', 'B'), 'ab').subarray(2880);
+    const { sheet, problems } = sheetOf(Buffer.concat([lists, Buffer.alloc(2880), values]));
+    expect([sheet?.rows, problems]).toEqual([1, []]);
+    expect(cellsOf(sheet, 'a')).toEqual([97]);
+  });
+
   it('mask what fills up the last byte of a bit column, and know a logical cell that is neither', () => {
     const cards = tableCards('BINTABLE', 3, 2, '9X', 'L');
     const { sheet } = sheetOf(fits(cards, Uint8Array.of(0x80, 0xff, 0x54, 0, 0x7f, 0)));

@@ -3,7 +3,7 @@ import type { ProblemList } from '../../problems.js';
 import { type SafeText, safeText } from '../../safe-text.js';
 import { CellDecoder, type ReadOptions, type SheetColumn } from '../../sheet.js';
 import { BATCH_ROWS, type FillRows, fillBits, filler, fillLogical } from './binary-numbers.js';
-import type { BinaryFormat } from './formats.js';
+import { type BinaryFormat, hasOneValue } from './formats.js';
 import type { BinaryLayout, FitsColumn } from './layout.js';
 
 type Column = FitsColumn<BinaryFormat>;
@@ -88,12 +88,6 @@ export class BinaryTableReader {
     if (scale === 1 && Number.isInteger(zero)) return safeText(String(stored + BigInt(zero)));
     return numberText(Number(stored) * scale + zero);
   }
-}
-
-/** Strings, flags and bits are one value however long they are; several numbers, complex ones and lists are not. */
-function hasOneValue({ type, repeat }: BinaryFormat): boolean {
-  if (type === 'A' || type === 'L' || type === 'X') return true;
-  return repeat === 1 && 'BIJKED'.includes(type);
 }
 
 function describe({ type, repeat }: BinaryFormat): string {

@@ -24,6 +24,12 @@ export function parseBinaryFormat(text: string): BinaryFormat | undefined {
   return { type, repeat, bytes };
 }
 
+/** Strings, flags and bits are one value however long they are; several numbers, complex ones and lists are not. */
+export function hasOneValue({ type, repeat }: BinaryFormat): boolean {
+  if (type === 'A' || type === 'L' || type === 'X') return repeat > 0;
+  return repeat === 1 && 'BIJKED'.includes(type);
+}
+
 export interface AsciiFormat {
   readonly type: 'A' | 'I' | 'F' | 'E' | 'D';
   /** Width in a row. */

@@ -78,10 +78,16 @@ function readColumns<Format extends { readonly bytes: number }>(
       return { code: 'damaged', seen: `TFORM${i} is '${text}', expected the format of a column` };
     }
     const start = startOf(i, end);
+    if (!(start >= 0)) {
+      return {
+        code: 'damaged',
+        seen: `TBCOL${i} is '${header.text(`TBCOL${i}`)}', expected the place of a column`,
+      };
+    }
     end = start + format.bytes;
     width += format.bytes;
     // The sum too: columns that lie over each other would cost more memory than the file has bytes.
-    if (!(start >= 0 && end <= rowBytes && width <= rowBytes)) {
+    if (end > rowBytes || width > rowBytes) {
       const seen = `column ${i} ends at byte ${Math.max(end, width)} of a row, expected at most ${rowBytes} (NAXIS1)`;
       return { code: 'damaged', seen };
     }

@@ -4,6 +4,7 @@ import { type SafeText, safeText } from '../../safe-text.js';
 import type { ReadOptions, Sheet } from '../../sheet.js';
 import { AsciiTableReader } from './ascii-table.js';
 import { BinaryTableReader } from './binary-table.js';
+import { hasOneValue } from './formats.js';
 import { type AsciiLayout, type BinaryLayout, layoutOf } from './layout.js';
 import { type FitsFault, type FitsUnit, readUnits } from './units.js';
 
@@ -46,9 +47,11 @@ function layoutsOf(units: readonly FitsUnit[], fileBytes: number) {
 }
 
 /** A star needs a value, and an identifier or a position beside it: one column alone is no table of stars. */
-function isUseful({ columns, rows }: Layout, options: ReadOptions): boolean {
+function isUseful(layout: Layout, options: ReadOptions): boolean {
+  const columns =
+    layout.kind === 'ascii' ? layout.columns : layout.columns.filter(({ format }) => hasOneValue(format));
   const uses = columns.map(({ head }) => options.use(head)).filter(use => use !== 'skip');
-  return rows > 0 && uses.length > 1 && uses.includes('value');
+  return layout.rows > 0 && uses.length > 1 && uses.includes('value');
 }
 
 function imagesOnly(units: readonly FitsUnit[]) {
