@@ -9,12 +9,7 @@ export type FillRows = (from: number, to: number, place: number, step: number) =
  * not finite is none. A loop for each type, since a call for each cell would cost more than the cell; views of the
  * bytes were measured to be faster here than words put together by shifts.
  */
-export function filler(
-  type: 'B' | 'I' | 'J' | 'K' | 'E' | 'D',
-  bytes: Uint8Array,
-  out: Float64Array,
-): FillRows {
-  const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+export function filler(type: 'B' | 'I' | 'J' | 'K' | 'E' | 'D', view: DataView, out: Float64Array): FillRows {
   switch (type) {
     case 'B':
       return (from, to, place, step) => {

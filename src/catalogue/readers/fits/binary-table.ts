@@ -17,12 +17,15 @@ interface Filling {
 /** Reads the columns that are wanted of a binary table (FITS Standard 4.0, 7.3). */
 export class BinaryTableReader {
   private readonly cells = new CellDecoder();
+  private readonly view: DataView;
 
   constructor(
     private readonly bytes: Uint8Array,
     private readonly layout: BinaryLayout,
     private readonly rows: number,
-  ) {}
+  ) {
+    this.view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+  }
 
   read(options: ReadOptions, problems: ProblemList): SheetColumn[] {
     const columns: SheetColumn[] = [];
@@ -62,7 +65,7 @@ export class BinaryTableReader {
   private fillerOf({ type, repeat }: BinaryFormat, out: Float64Array): FillRows {
     if (type === 'L') return fillLogical(this.bytes, out, repeat);
     if (type === 'X') return fillBits(this.bytes, out, repeat);
-    return filler(type as 'B', this.bytes, out);
+    return filler(type as 'B', this.view, out);
   }
 
   private place({ start }: Column, row: number): number {
@@ -73,17 +76,15 @@ export class BinaryTableReader {
   private word(column: Column, row: number): SafeText {
     const start = this.place(column, row);
     const width = Math.min(column.format.bytes, LIMITS.cell_bytes);
-    const zero = this.bytes.subarray(start, start + width).indexOf(0);
-    return safeText(this.cells.text(this.bytes, start, zero < 0 ? width : zero).trimEnd());
+    let length = 0;
+    while (length < width && this.bytes[start + length] !== 0) length++;
+    return safeText(this.cells.text(this.bytes, start, length).trimEnd());
   }
 
   /** All digits of a 64-bit number, as an identifier needs them. */
   private wholeNumber(column: Column, row: number): SafeText {
     const { scale, zero, missing } = column;
-    const p = this.place(column, row);
-    let bits = 0n;
-    for (let i = 0; i < 8; i++) bits = (bits << 8n) | BigInt(this.bytes[p + i]);
-    const stored = BigInt.asIntN(64, bits);
+    const stored = this.view.getBigInt64(this.place(column, row));
     if (missing !== '' && String(stored) === missing) return safeText('');
     if (scale === 1 && Number.isInteger(zero)) return safeText(String(stored + BigInt(zero)));
     return numberText(Number(stored) * scale + zero);
