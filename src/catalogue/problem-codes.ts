@@ -35,6 +35,21 @@ export const PROBLEM_CODES = {
     remedy: 'Split the table, or leave columns out.',
     cost: 'file',
   },
+  'cut-short': {
+    cause: 'The file ends before what it declares.',
+    remedy: 'Write or copy it again; it is read anew as soon as it changes.',
+    cost: 'file',
+  },
+  damaged: {
+    cause: 'The content breaks the rules of its own format.',
+    remedy: 'Write or copy the file again.',
+    cost: 'file',
+  },
+  'more-tables': {
+    cause: 'The file holds further tables with usable columns.',
+    remedy: 'Write one file a table if they are wanted too.',
+    cost: 'nothing',
+  },
   'no-header': {
     cause: 'No line names the columns.',
     remedy: 'Put a line with the column names before the first row.',
@@ -79,6 +94,11 @@ export const PROBLEM_CODES = {
   'text-column': {
     cause: 'A column that should hold numbers holds text.',
     remedy: 'The column is not used; write plain numbers with a decimal point.',
+    cost: 'nothing',
+  },
+  'many-values': {
+    cause: 'A column with several values a row.',
+    remedy: 'The column is not used; write one value a row.',
     cost: 'nothing',
   },
   'row-width': {

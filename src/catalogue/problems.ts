@@ -62,7 +62,8 @@ export class ProblemList {
     for (const [code, { count, more }] of this.kinds) {
       if (more === undefined) continue;
       const left = count - LIMITS.problemsOfAKind;
-      const seen = `${left} more of this kind from line ${more.line} on, ${count} in all`;
+      const from = more.line > 0 ? ` from line ${more.line} on` : '';
+      const seen = `${left} more of this kind${from}, ${count} in all`;
       counts.push(makeProblem(code, this.file, 0, seen, more.cost));
     }
     return [...this.told, ...counts];

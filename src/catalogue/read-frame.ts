@@ -4,7 +4,8 @@ import type { BandColumn, FrameReadings } from './frame.js';
 import type { InputSettings } from './input-settings.js';
 import { LIMITS } from './limits.js';
 import { type Problem, ProblemList } from './problems.js';
-import { readTextTable } from './readers/text-table.js';
+import { unpack } from './readers/gzip.js';
+import { readSheet } from './readers/read-sheet.js';
 import { BandNames } from './readings/band-name.js';
 import type { Draft } from './readings/draft.js';
 import { readFacts } from './readings/facts.js';
@@ -20,19 +21,33 @@ import type { Sheet } from './sheet.js';
 
 /** What a file gave: its readings, or at least one problem of cost 'file'. */
 export interface ReadFrame {
+  /** What the file holds, unpacked: a table and its compressed copy are the same. */
+  readonly content: Uint8Array;
   readonly frame: FrameReadings | undefined;
   readonly problems: readonly Problem[];
 }
 
+const UNPACKING_WORDS = {
+  'cut-short': 'the gzip stream stops before its end',
+  damaged: 'the gzip stream cannot be unpacked, or not to what it was',
+  'too-large': `unpacked, it has more than ${LIMITS.unpacked_bytes} bytes`,
+} as const;
+
 /** Reads one photometry file. `name` is its name for people, and may hold a band as in 'M67_V_003.csv'. */
-export function readFrame(name: string, bytes: Uint8Array, input: InputSettings): ReadFrame {
+export async function readFrame(name: string, bytes: Uint8Array, input: InputSettings): Promise<ReadFrame> {
   const file = safeText(name, LIMITS.fileName_characters);
   const problems = new ProblemList(file);
   const recogniser = new Recogniser(input);
   const options = { use: recogniser.use.bind(recogniser), missing: input.missing };
-  const sheet = readTextTable(bytes, options, problems);
+  const unpacked = await unpack(bytes);
+  if (unpacked.kind !== 'whole') {
+    problems.add(unpacked.kind, 0, UNPACKING_WORDS[unpacked.kind]);
+    return { content: bytes, frame: undefined, problems: problems.all() };
+  }
+  const content = unpacked.bytes;
+  const sheet = await readSheet(content, options, problems);
   const frame = sheet && frameOfSheet(file, sheet, input, recogniser, problems);
-  return { frame, problems: problems.all() };
+  return { content, frame, problems: problems.all() };
 }
 
 /** Readings of a table that has been read from whatever format. */

@@ -64,7 +64,7 @@ export class CellPlaces {
   private readonly starts: Uint32Array;
   /** Length in bytes; the top bit marks a quoted cell with doubled quotes in it. */
   private readonly lengths: Uint16Array;
-  private readonly decoder = new TextDecoder();
+  private readonly cells = new CellDecoder();
 
   constructor(
     private readonly bytes: Uint8Array,
@@ -82,12 +82,17 @@ export class CellPlaces {
   text(row: number): SafeText {
     const start = this.starts[row];
     const length = this.lengths[row] & ~DOUBLED_QUOTES;
-    const raw = shortAscii(this.bytes, start, length) ?? this.decode(start, length);
+    const raw = this.cells.text(this.bytes, start, length);
     return safeText(this.lengths[row] & DOUBLED_QUOTES ? raw.replaceAll('""', '"') : raw);
   }
+}
 
-  private decode(start: number, length: number): string {
-    return this.decoder.decode(this.bytes.subarray(start, start + length));
+/** Raw text of cells; what it gives has still to be made safe. */
+export class CellDecoder {
+  private readonly decoder = new TextDecoder();
+
+  text(bytes: Uint8Array, start: number, length: number): string {
+    return shortAscii(bytes, start, length) ?? this.decoder.decode(bytes.subarray(start, start + length));
   }
 }
 

@@ -81,8 +81,8 @@ export class NightEngine implements NightState {
   }
 
   /** Reads one file of the night's folder and lets everything that depends on it follow. */
-  absorb(name: string, bytes: Uint8Array): FileOutcome {
-    const taken = this.take({ name, bytes, place: name });
+  async absorb(name: string, bytes: Uint8Array): Promise<FileOutcome> {
+    const taken = await this.take({ name, bytes, place: name });
     if (taken.frame >= 0) this.follow(taken.frame, taken.stars);
     return taken;
   }
@@ -92,7 +92,7 @@ export class NightEngine implements NightState {
     const outcomes: FileOutcome[] = [];
     let last = -1;
     for await (const file of files) {
-      const { stars: _, ...outcome } = this.take(file);
+      const { stars: _, ...outcome } = await this.take(file);
       if (outcome.frame >= 0) last = outcome.frame;
       outcomes.push(outcome);
     }
@@ -113,14 +113,18 @@ export class NightEngine implements NightState {
     this.book.set(name, [problem]);
   }
 
-  private take({ name, bytes, place }: NightFile): FileOutcome & { readonly stars: Uint32Array } {
-    const { frame, problems } = readFrame(name, bytes, this.profile.input);
+  private async take({
+    name,
+    bytes,
+    place,
+  }: NightFile): Promise<FileOutcome & { readonly stars: Uint32Array }> {
+    const { content, frame, problems } = await readFrame(name, bytes, this.profile.input);
     if (frame === undefined) {
       // An earlier frame under this name stays: it was good.
       this.book.set(place, problems);
       return { name, kind: 'refused', frame: -1, problems, stars: NO_STARS };
     }
-    const fate = this.log.decide(place, bytes);
+    const fate = this.log.decide(place, content);
     if (fate.kind === 'known') return { name, kind: 'known', ...this.repeated(place, fate.freed) };
     this.book.set(place, problems);
     if (fate.kind === 'unchanged') return { name, kind: 'unchanged', frame: -1, problems, stars: NO_STARS };

@@ -35,7 +35,7 @@ function run(start: WorkerStart, port: NonNullable<typeof parentPort>): void {
 
   const watcher = new FolderWatcher(start.folder, start.poll, {
     onFile: async (name, bytes) => {
-      engine.absorb(name, bytes);
+      await engine.absorb(name, bytes);
       files.add(name);
       viewSoon();
       // Between two files the port gets its turn: questions about a star are not kept waiting.

@@ -1,8 +1,13 @@
+import { ProblemList } from '../../src/catalogue/problems.js';
 import { readFrame } from '../../src/catalogue/read-frame.js';
+import { readFits } from '../../src/catalogue/readers/fits/read-fits.js';
+import { safeText } from '../../src/catalogue/safe-text.js';
+import type { ReadOptions } from '../../src/catalogue/sheet.js';
 import { StarCatalogue } from '../../src/catalogue/stars.js';
 import { buildModel, classifyStars, makeOddsColumns, type StarInputs } from '../../src/science/odds/index.js';
 import { CellWriter } from '../../src/screens/terminal/cell-writer.js';
 import { OPEN_FIELD } from '../support/star-inputs.js';
+import { astropySeconds, fitsTable, READINGS } from './fits.js';
 import { numpyStarsPerSecond } from './odds-reference.js';
 
 /** Prints how long the heavy steps take on this machine, and ratios that mean something on any: npm run bench. */
@@ -10,9 +15,9 @@ const STARS = 100_000;
 
 const FIELD = { ...OPEN_FIELD, extinction_AV: 0.1, extinctionSigma_AV: 0.05 };
 
-function timed<T>(work: () => T): [T, number] {
+async function timed<T>(work: () => T | Promise<T>): Promise<[T, number]> {
   const start = performance.now();
-  const result = work();
+  const result = await work();
   return [result, (performance.now() - start) / 1000];
 }
 
@@ -65,7 +70,7 @@ for (const [name, snr] of [
   const inputs = field(snr);
   // The second run is measured: a night's worker has long been warm.
   classifyStars(model, inputs, 0, STARS, out);
-  const [, seconds] = timed(() => classifyStars(model, inputs, 0, STARS, out));
+  const [, seconds] = await timed(() => classifyStars(model, inputs, 0, STARS, out));
   line(`class odds, B and V, ${name}`, seconds, STARS, 'stars');
   if (snr < 10) continue;
   const reference = numpyStarsPerSecond(model, inputs);
@@ -78,23 +83,39 @@ for (const [name, snr] of [
 
 const bytes = table();
 const input = { columns: {}, band: undefined, matchRadius_arcsec: 1, missing: [] };
-const [splitRows, splitSeconds] = timed(() =>
+const [splitRows, splitSeconds] = await timed(() =>
   new TextDecoder()
     .decode(bytes)
     .split('\n')
     .map(row => row.split(',').map(Number)),
 );
-const [{ frame }, readSeconds] = timed(() => readFrame('bench.csv', bytes, input));
+const [{ frame }, readSeconds] = await timed(() => readFrame('bench.csv', bytes, input));
 line('reading a table, 12 columns', readSeconds, STARS, 'rows');
 console.log(
   `  split and Number over the same bytes takes ${(splitSeconds / readSeconds).toFixed(1)} times as long (${splitRows.length} rows)`,
 );
 
+const FITS_ROWS = 500_000;
+const fits = fitsTable(FITS_ROWS);
+const everything: ReadOptions = { use: () => 'value', missing: [] };
+let fitsSeconds = Number.POSITIVE_INFINITY;
+for (let i = 0; i < READINGS; i++) {
+  const [, seconds] = await timed(() => readFits(fits, everything, new ProblemList(safeText('bench.fits'))));
+  fitsSeconds = Math.min(fitsSeconds, seconds);
+}
+line('reading a FITS table, 10 columns', fitsSeconds, FITS_ROWS, 'rows');
+const astropy = astropySeconds(fits);
+console.log(
+  astropy === undefined
+    ? '  not compared with Astropy, which is not installed here'
+    : `  Astropy takes ${(astropy / fitsSeconds).toFixed(1)} times as long for the same number columns`,
+);
+
 const catalogue = new StarCatalogue(1);
 if (frame !== undefined) {
-  const [, first] = timed(() => catalogue.absorb(frame, 0));
+  const [, first] = await timed(() => catalogue.absorb(frame, 0));
   line('first frame into stars', first, STARS, 'rows');
-  const [, second] = timed(() =>
+  const [, second] = await timed(() =>
     catalogue.absorb({ ...frame, ids: frame.ids.map(() => frame.facts.object), hasIds: false }, 1),
   );
   line('second frame matched by position', second, STARS, 'rows');

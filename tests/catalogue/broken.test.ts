@@ -12,11 +12,24 @@ const FOLDER = new URL('../broken/', import.meta.url);
 const BROKEN: Readonly<Record<string, readonly [rows: number, ...phrases: string[]]>> = {
   'empty-file.no-rows.csv': [0, 'no rows and no column names'],
   'empty-file.header-only.csv': [0, 'no row below it'],
-  'not-a-table.fits': [0, 'looks like a FITS file'],
-  'not-a-table.gz': [0, 'looks like a gzip archive'],
   'not-a-table.binary': [0, 'looks like a binary file'],
   'not-a-table.xml': [0, 'looks like an XML'],
   'not-a-table.one-column.txt': [0, 'nothing splits the first line'],
+  'not-a-table.image.fits': [0, 'this FITS file holds an image or nothing, expected a table extension'],
+  'not-a-table.images.fits': [0, 'this FITS file holds 2 images'],
+  'empty-file.table.fits': [0, 'the table has no rows'],
+  'cut-short.header.fits': [0, 'the header of part 2 has no END'],
+  'cut-short.rows.fits': [2, 'the table declares 6 rows, the file has 2 of them'],
+  'cut-short.part.fits': [6, 'part 3 declares 3600 bytes of data, the file has 2880 of them'],
+  'cut-short.absurd.fits': [120, 'the table declares 9999999999999 rows, the file has 120 of them'],
+  'cut-short.csv.gz': [0, 'the gzip stream stops before its end', 'read anew as soon as it changes'],
+  'damaged.csv.gz': [0, 'the gzip stream cannot be unpacked, or not to what it was'],
+  'damaged.format.fits': [0, "TFORM3 is '8Y', expected the format of a column"],
+  'damaged.width.fits': [0, 'column 3 ends at byte 400012 of a row, expected at most 24 (NAXIS1)'],
+  'damaged.size.fits': [0, 'the header of part 2 does not say how long its data are'],
+  'too-large.columns.fits': [0, 'a table of 999 columns, at most 512 are read'],
+  'many-values.fits': [6, "'B' is an array of 3, expected one value a row"],
+  'more-tables.fits': [6, "'FIRST' is read, and not extension 2, 'LAST'"],
   'no-header.csv': [0, 'no-header.csv:1: ', 'holds numbers, not column names'],
   'no-position.csv': [0, 'among the columns x, y, V, e_V', 'ra = "ALPHA"'],
   'no-data.csv': [0, 'among the columns id, ra, dec, x, y'],
@@ -41,8 +54,8 @@ const BROKEN: Readonly<Record<string, readonly [rows: number, ...phrases: string
   'missing-column.csv': [1, "no 'QUALITY' (flag in the profile)"],
 };
 
-/** Given elsewhere: by the folder watcher, and in the tests of the limits. */
-const NOT_HERE = ['unreadable', 'not-regular', 'too-large'];
+/** Given elsewhere: by the folder watcher. */
+const NOT_HERE = ['unreadable', 'not-regular'];
 
 describe('broken files', () => {
   it('are all in the table', () => {
@@ -54,9 +67,9 @@ describe('broken files', () => {
     expect(Object.keys(PROBLEM_CODES).filter(code => !covered.has(code))).toEqual(NOT_HERE);
   });
 
-  it.each(Object.entries(BROKEN))('%s', (name, [rows, ...phrases]) => {
+  it.each(Object.entries(BROKEN))('%s', async (name, [rows, ...phrases]) => {
     const input = name.startsWith('missing-column') ? { ...INPUT, columns: { flag: 'QUALITY' } } : INPUT;
-    const { frame, problems } = readFrame(name, readFileSync(new URL(name, FOLDER)), input);
+    const { frame, problems } = await readFrame(name, readFileSync(new URL(name, FOLDER)), input);
     expect(frame?.rows ?? 0).toBe(rows);
     if (frame === undefined) expect(problems.some(problem => problem.cost === 'file')).toBe(true);
     expect(problems.map(problem => problem.code)).toContain(name.split('.')[0]);

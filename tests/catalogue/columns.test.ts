@@ -85,34 +85,34 @@ describe('the profile', () => {
   const text = 'STAR,ALPHA_X,DELTA_X,VCAL,VCAL_ERR\ns1,10,20,12.5,0.02\n';
   const columns = { id: 'STAR', ra: 'ALPHA_X', dec: 'DELTA_X', 'mag.V': 'VCAL', 'mag_error.V': 'VCAL_ERR' };
 
-  it('names columns that no rule knows', () => {
-    expect(codes(read(text))).toContain('no-position');
-    const frame = frameOf(text, { columns });
+  it('names columns that no rule knows', async () => {
+    expect(codes(await read(text))).toContain('no-position');
+    const frame = await frameOf(text, { columns });
     expect([frame.ra_deg[0], frame.dec_deg[0], frame.ids[0]]).toEqual([10, 20, 's1']);
     expect(magsOf(frame, 'V')).toEqual([12.5]);
     expect(sigmasOf(frame, 'V')).toEqual([0.02]);
   });
 
-  it('settles what is doubtful, and what has two candidates', () => {
+  it('settles what is doubtful, and what has two candidates', async () => {
     const doubtful = 'id,ra,dec,R,e_R\na,10,20,12.5,0.01\n';
-    expect(read(doubtful).frame).toBeUndefined();
-    const settled = read(doubtful, { columns: { 'mag.Rc': 'R', 'mag_error.Rc': 'e_R' } });
+    expect((await read(doubtful)).frame).toBeUndefined();
+    const settled = await read(doubtful, { columns: { 'mag.Rc': 'R', 'mag_error.Rc': 'e_R' } });
     expect(settled.problems).toEqual([]);
     expect(settled.frame?.bands[0].band).toBe('Rc');
     const two = 'id,ra,dec,V,Vmag,e_V\na,10,20,12.5,13,0.01\n';
-    expect(magsOf(frameOf(two, { columns: { 'mag.V': 'Vmag' } }), 'V')).toEqual([13]);
+    expect(magsOf(await frameOf(two, { columns: { 'mag.V': 'Vmag' } }), 'V')).toEqual([13]);
   });
 
-  it('says what a filter is called', () => {
+  it('says what a filter is called', async () => {
     const single = '# FILTER = R\nid,ra,dec,mag,mag_err\na,10,20,12.5,0.01\n';
-    expect(read(single, { columns: { 'mag.Rc': 'R' } }).frame?.bands[0].band).toBe('Rc');
-    expect(read(single, { band: 'Rc' }).frame?.bands[0].band).toBe('Rc');
-    expect(read(single, { band: 'V' }).frame).toBeUndefined();
+    expect((await read(single, { columns: { 'mag.Rc': 'R' } })).frame?.bands[0].band).toBe('Rc');
+    expect((await read(single, { band: 'Rc' })).frame?.bands[0].band).toBe('Rc');
+    expect((await read(single, { band: 'V' })).frame).toBeUndefined();
   });
 
-  it('gives the band of files that say none, and words and numbers that mean "missing"', () => {
+  it('gives the band of files that say none, and words and numbers that mean "missing"', async () => {
     const text = 'id,ra,dec,mag,mag_err\na,10,20,12.5,0.01\nb,11,20,none,0.01\nc,12,20,33.3,0.01\n';
-    const frame = frameOf(text, { band: 'B', missing: ['33.3'] });
+    const frame = await frameOf(text, { band: 'B', missing: ['33.3'] });
     expect(frame.ids).toEqual(['a']);
     expect(magsOf(frame, 'B')).toEqual([12.5]);
   });
@@ -196,12 +196,14 @@ describe('band names', () => {
     ['M67_V_003.csv', 'V'],
     ['night1-Ic.12.txt', 'Ic'],
     ['g.csv', 'g'],
-  ])('of the file %s: %s', (name, band) => {
+  ])('of the file %s: %s', async (name, band) => {
     const text = 'id,ra,dec,mag,mag_err\na,10,20,12.5,0.01\n';
-    expect(read(text, {}, name).frame?.bands[0].band).toBe(band);
+    expect((await read(text, {}, name)).frame?.bands[0].band).toBe(band);
   });
 
-  it('two in a file name are none', () => {
-    expect(codes(read('id,ra,dec,mag,mag_err\na,10,20,12.5,0.01\n', {}, 'B_V_1.csv'))).toEqual(['no-band']);
+  it('two in a file name are none', async () => {
+    expect(codes(await read('id,ra,dec,mag,mag_err\na,10,20,12.5,0.01\n', {}, 'B_V_1.csv'))).toEqual([
+      'no-band',
+    ]);
   });
 });

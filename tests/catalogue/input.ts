@@ -10,13 +10,21 @@ export function bytesOf(text: string): Uint8Array {
   return new TextEncoder().encode(text);
 }
 
-export function read(text: string, more: Partial<InputSettings> = {}, name = 'frame.csv'): ReadFrame {
+export function read(
+  text: string,
+  more: Partial<InputSettings> = {},
+  name = 'frame.csv',
+): Promise<ReadFrame> {
   return readFrame(name, bytesOf(text), { ...INPUT, ...more });
 }
 
 /** The frame of a text that has to be readable. */
-export function frameOf(text: string, more: Partial<InputSettings> = {}, name = 'frame.csv'): FrameReadings {
-  const { frame, problems } = read(text, more, name);
+export async function frameOf(
+  text: string,
+  more: Partial<InputSettings> = {},
+  name = 'frame.csv',
+): Promise<FrameReadings> {
+  const { frame, problems } = await read(text, more, name);
   if (frame === undefined) throw new Error(problems.map(problem => problem.text).join('\n'));
   return frame;
 }

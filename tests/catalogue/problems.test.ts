@@ -32,6 +32,12 @@ describe('problems', () => {
     expect(all.at(-1)?.cost).toBe('row');
   });
 
+  it('count without a line where the file has none', () => {
+    const list = new ProblemList(FILE);
+    for (let row = 1; row <= 12; row++) list.add('bad-number', 0, `cell ${row}`);
+    expect(list.all().at(-1)?.text).toMatch(/^2 more of this kind, 12 in all\./);
+  });
+
   it('have a cause and a remedy for every code', () => {
     for (const [code, { cause, remedy }] of Object.entries(PROBLEM_CODES)) {
       expect(code).toMatch(/^[a-z-]+$/);

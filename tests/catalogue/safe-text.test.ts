@@ -35,18 +35,21 @@ describe('safe text', () => {
 
   it.each(ATTACKS)('%s', (_, raw, clean) => expect(safeText(raw)).toBe(clean));
 
-  it.each(ATTACKS)('%s: in an identifier, a column name, a header value and the file name', (_, raw) => {
-    const cell = `"${raw.replaceAll('"', '""')}"`;
-    const text = `# OBJECT = ${raw}\nid,ra,dec,V,e_V,${cell}\n${cell},10,20,12,0.01,x\n,bad,20,12,0.1,x\n`;
-    const result = read(text, {}, raw);
-    const texts = [
-      ...(result.frame?.ids ?? []),
-      result.frame?.facts.object ?? '',
-      result.frame?.facts.name ?? '',
-    ];
-    for (const each of [...texts, ...result.problems.flatMap(p => [p.text, p.file])])
-      expect(each).toMatch(HARMLESS);
-  });
+  it.each(ATTACKS)(
+    '%s: in an identifier, a column name, a header value and the file name',
+    async (_, raw) => {
+      const cell = `"${raw.replaceAll('"', '""')}"`;
+      const text = `# OBJECT = ${raw}\nid,ra,dec,V,e_V,${cell}\n${cell},10,20,12,0.01,x\n,bad,20,12,0.1,x\n`;
+      const result = await read(text, {}, raw);
+      const texts = [
+        ...(result.frame?.ids ?? []),
+        result.frame?.facts.object ?? '',
+        result.frame?.facts.name ?? '',
+      ];
+      for (const each of [...texts, ...result.problems.flatMap(p => [p.text, p.file])])
+        expect(each).toMatch(HARMLESS);
+    },
+  );
 
   it('leaves no control character of any text', () => {
     fc.assert(
@@ -74,12 +77,11 @@ describe('safe text', () => {
     expect(safeText(text)).toBe('');
   });
 
-  it('does not lose a column named __proto__', () => {
+  it('does not lose a column named __proto__', async () => {
     const text = '__proto__,id,ra,dec,constructor,V,e_V\n1,a,10,20,2,12.5,0.01\n';
-    expect(codes(read(text))).toEqual([]);
-    expect(frameOf(text, { columns: { 'mag.B': '__proto__' } }).bands.map(band => band.band)).toEqual([
-      'B',
-      'V',
-    ]);
+    expect(codes(await read(text))).toEqual([]);
+    expect((await frameOf(text, { columns: { 'mag.B': '__proto__' } })).bands.map(band => band.band)).toEqual(
+      ['B', 'V'],
+    );
   });
 });

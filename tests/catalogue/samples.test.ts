@@ -4,9 +4,9 @@ import type { FrameReadings } from '../../src/catalogue/frame.js';
 import { readFrame } from '../../src/catalogue/read-frame.js';
 import { codes, INPUT } from './input.js';
 
-/** Every table in tests/samples has its expected readings beside it: adding a pair adds a test. */
+/** Every table in tests/samples has its expected readings beside it: adding a pair adds a test; scripts write some. */
 const FOLDER = new URL('../samples/', import.meta.url);
-const TABLES = readdirSync(FOLDER).filter(name => !name.endsWith('.json'));
+const TABLES = readdirSync(FOLDER).filter(name => !/\.(json|py)$/.test(name));
 
 type Numbers = readonly (number | null)[];
 
@@ -28,11 +28,11 @@ function expectNumbers(actual: ArrayLike<number>, expected: Numbers): void {
   });
 }
 
-describe.each(TABLES)('%s', table => {
+describe.each(TABLES)('%s', async table => {
   const expected = JSON.parse(
-    readFileSync(new URL(table.replace(/\.\w+$/, '.json'), FOLDER), 'utf8'),
+    readFileSync(new URL(table.replace(/(\.\w+)+$/, '.json'), FOLDER), 'utf8'),
   ) as Expected;
-  const result = readFrame(table, readFileSync(new URL(table, FOLDER)), INPUT);
+  const result = await readFrame(table, readFileSync(new URL(table, FOLDER)), INPUT);
   const frame = result.frame as FrameReadings;
 
   it('gives the expected rows', () => {

@@ -1,7 +1,8 @@
 import { readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
+import { gzipSync } from 'node:zlib';
 import { describe, expect, it } from 'vitest';
-import { NightEngine } from '../../src/night/engine.js';
+import { type FileOutcome, NightEngine } from '../../src/night/engine.js';
 import { FollowUpDesk } from '../../src/night/follow-up.js';
 import { parseProfile } from '../../src/night/profile/parse.js';
 import { ViewMaker } from '../../src/night/view-maker.js';
@@ -28,9 +29,10 @@ const B = [10.45, 15.05, 10.35];
 
 const bytes = (content: string) => new TextEncoder().encode(content);
 
-function night(...files: readonly (readonly [string, string])[]) {
+async function night(...files: readonly (readonly [string, string])[]) {
   const engine = new NightEngine(profile!);
-  const outcomes = files.map(([name, content]) => engine.absorb(name, bytes(content)));
+  const outcomes: FileOutcome[] = [];
+  for (const [name, content] of files) outcomes.push(await engine.absorb(name, bytes(content)));
   const maker = new ViewMaker(engine, new FollowUpDesk(engine));
   return { engine, outcomes, maker, view: maker.view(NOW) };
 }
@@ -38,8 +40,8 @@ function night(...files: readonly (readonly [string, string])[]) {
 const whole = () => night(['a.csv', ASTROMETRY], ['b.csv', frame('B', B)], ['v.csv', frame('V', V, 0, '05')]);
 
 describe('a night of three stars', () => {
-  it('merges catalogue and frames by position, and classifies', () => {
-    const { view } = whole();
+  it('merges catalogue and frames by position, and classifies', async () => {
+    const { view } = await whole();
     expect(view.stars.ids).toEqual(['sun', 'dwarf', 'giant']);
     expect(view.frames.map(({ name }) => name)).toEqual(['a.csv', 'b.csv', 'v.csv']);
     expect(view.axes).toEqual({ colour: { blue: 'B', red: 'V' }, band: 'V' });
@@ -52,13 +54,13 @@ describe('a night of three stars', () => {
     );
   });
 
-  it('gives the same stars in whatever order the files come', () => {
-    const forward = whole().view;
-    const backward = night(
+  it('gives the same stars in whatever order the files come', async () => {
+    const forward = (await whole()).view;
+    const { view: backward } = await night(
       ['v.csv', frame('V', V, 0, '05')],
       ['b.csv', frame('B', B)],
       ['a.csv', ASTROMETRY],
-    ).view;
+    );
     expect([...backward.stars.absMag].map(mag => mag.toFixed(3))).toEqual(
       [...forward.stars.absMag].map(mag => mag.toFixed(3)),
     );
@@ -67,8 +69,8 @@ describe('a night of three stars', () => {
     expect(backward.stars.ids).toEqual(['sun', 'dwarf', 'giant']);
   });
 
-  it('counts the same content once, under whatever name', () => {
-    const { outcomes, view } = night(
+  it('counts the same content once, under whatever name', async () => {
+    const { outcomes, view } = await night(
       ['v.csv', frame('V', V)],
       ['copy.csv', frame('V', V)],
       ['v.csv', frame('V', V)],
@@ -79,17 +81,24 @@ describe('a night of three stars', () => {
     expect(view.stars.readings[0]).toBe(1);
   });
 
-  it('a re-reduction replaces its earlier frame, and the means follow', () => {
-    const { engine, maker } = whole();
-    expect(engine.absorb('v.csv', bytes(frame('V', V, 0.2, '05'))).kind).toBe('replaced');
+  it('counts a table and its compressed copy once', async () => {
+    const { engine } = await night(['v.csv', frame('V', V)]);
+    const copy = await engine.absorb('v.csv.gz', gzipSync(bytes(frame('V', V))));
+    expect(copy.kind).toBe('known');
+    expect(engine.catalogue.readings[0]).toBe(1);
+  });
+
+  it('a re-reduction replaces its earlier frame, and the means follow', async () => {
+    const { engine, maker } = await whole();
+    expect((await engine.absorb('v.csv', bytes(frame('V', V, 0.2, '05')))).kind).toBe('replaced');
     const { stars } = maker.view(NOW);
     expect(stars.mag[0]).toBeCloseTo(10.0, 3);
     expect(stars.readings[0]).toBe(2);
   });
 
-  it('a latest.csv beside numbered copies keeps all frames', () => {
+  it('a latest.csv beside numbered copies keeps all frames', async () => {
     const [one, two] = [frame('V', V), frame('V', V, 0.1, '10')];
-    const { outcomes, view } = night(
+    const { outcomes, view } = await night(
       ['latest.csv', one],
       ['v1.csv', one],
       ['latest.csv', two],
@@ -100,27 +109,27 @@ describe('a night of three stars', () => {
     expect(view.stars.mag[0]).toBeCloseTo(9.85, 3);
   });
 
-  it('a file that becomes a copy of another takes its own frame away', () => {
+  it('a file that becomes a copy of another takes its own frame away', async () => {
     const [one, two] = [frame('V', V), frame('V', V, 0.1, '10')];
-    const { outcomes, view } = night(['v1.csv', one], ['v2.csv', two], ['v2.csv', one]);
+    const { outcomes, view } = await night(['v1.csv', one], ['v2.csv', two], ['v2.csv', one]);
     expect(outcomes.at(-1)?.kind).toBe('known');
     expect(view.frames.map(({ name }) => name)).toEqual(['v1.csv']);
     expect(view.stars.mag[0]).toBeCloseTo(9.8, 3);
   });
 
-  it('a file written anew takes its old problems away, a copy does not repeat them', () => {
+  it('a file written anew takes its old problems away, a copy does not repeat them', async () => {
     const half = `${frame('V', V)}30.3,45`;
-    const { engine } = night(['v.csv', half], ['copy.csv', half]);
+    const { engine } = await night(['v.csv', half], ['copy.csv', half]);
     expect(engine.problems.map(({ code, file }) => [code, file])).toEqual([['row-width', 'v.csv']]);
-    engine.absorb('v.csv', bytes(frame('V', V, 0, '01')));
+    await engine.absorb('v.csv', bytes(frame('V', V, 0, '01')));
     expect(engine.problems).toEqual([]);
   });
 
-  it('a rewrite that cannot be read leaves the good frame, until it can', () => {
-    const { engine } = night(['v.csv', frame('V', V)], ['v.csv', 'rubbish']);
+  it('a rewrite that cannot be read leaves the good frame, until it can', async () => {
+    const { engine } = await night(['v.csv', frame('V', V)], ['v.csv', 'rubbish']);
     expect(engine.frames).toHaveLength(1);
     expect(engine.problems).toHaveLength(1);
-    engine.absorb('v.csv', bytes(frame('V', V)));
+    await engine.absorb('v.csv', bytes(frame('V', V)));
     expect(engine.problems).toEqual([]);
   });
 
@@ -138,26 +147,26 @@ describe('a night of three stars', () => {
     );
     expect(outcomes.map(({ kind }) => kind)).toEqual(['read', 'read', 'read']);
     const all = new ViewMaker(engine, new FollowUpDesk(engine)).view(NOW);
-    expect(all.stars.absMag).toEqual(whole().view.stars.absMag);
+    expect(all.stars.absMag).toEqual((await whole()).view.stars.absMag);
     expect(all.shortlist.map(({ id }) => id)).toEqual(['dwarf']);
   });
 
-  it('a refused file costs nothing else', () => {
-    const { engine, maker, view } = whole();
-    const outcome = engine.absorb('bad.csv', bytes('\u0000\u0001rubbish'));
+  it('a refused file costs nothing else', async () => {
+    const { engine, maker, view } = await whole();
+    const outcome = await engine.absorb('bad.csv', bytes('\u0000\u0001rubbish'));
     expect(outcome.kind).toBe('refused');
     expect(outcome.problems).toHaveLength(1);
     expect(maker.view(NOW).shortlist).toEqual(view.shortlist);
   });
 
-  it('without a colour nothing is flagged, and the caution says what is missing', () => {
-    const { engine, view } = night(['a.csv', ASTROMETRY], ['v.csv', frame('V', V)]);
+  it('without a colour nothing is flagged, and the caution says what is missing', async () => {
+    const { engine, view } = await night(['a.csv', ASTROMETRY], ['v.csv', frame('V', V)]);
     expect(view.shortlist).toEqual([]);
     expect(engine.flags.of(1)?.cautions.join()).toMatch(/no B-V yet/);
   });
 
-  it('a star in detail has everything, and its distance is that of its parallax', () => {
-    const { maker } = whole();
+  it('a star in detail has everything, and its distance is that of its parallax', async () => {
+    const { maker } = await whole();
     const detail = maker.detail(1, NOW);
     expect(detail.luminosityClass).toBe('WD');
     expect(detail.mags.map(({ band }) => band)).toEqual(['B', 'V']);
@@ -167,9 +176,9 @@ describe('a night of three stars', () => {
     expect(detail.lightCurves).toHaveLength(2);
   });
 
-  it('exposures follow the seeing of the newest frames', () => {
-    const good = whole();
-    const poor = night(
+  it('exposures follow the seeing of the newest frames', async () => {
+    const good = await whole();
+    const poor = await night(
       ['a.csv', ASTROMETRY],
       ['b.csv', frame('B', B)],
       ['v.csv', frame('V', V, 0, '05').replace('FWHM = 2.0', 'FWHM = 5.0')],

@@ -1,5 +1,9 @@
+/** How a file shows that it is finished: text by being left alone, the others by what they hold. */
+export type EndingKind = 'text' | 'fits' | 'gzip';
+
 /** What is known of a file without reading it whole. */
 export interface Glance {
+  readonly kind: EndingKind;
   readonly bytes: number;
   readonly modified_ms: number;
   /** Last byte; undefined for an empty file. */
@@ -22,12 +26,13 @@ export const PATIENCE_MS = 2000;
 const NEWLINE = 10;
 
 /**
- * Is a text table finished? It ends with a newline and has not been touched for a while (an old file that is renamed
- * into place is taken at once); or it does not, and nothing has come for so long, as we have seen ourselves, that
- * nothing will. A writer that pauses longer is caught by the later change: the file is read again and replaces its
- * earlier frame.
+ * Is a file finished, by how still it lies? A text table ends with a newline and has not been touched for a while (an
+ * old file that is renamed into place is taken at once); or it does not, and nothing has come for so long, as we have
+ * seen ourselves, that nothing will. A writer that pauses longer is caught by the later change: the file is read again
+ * and replaces its earlier frame. In other files a newline means nothing: those that do not reach the end that they
+ * tell of themselves (`reachesItsEnd`) are given the same patience.
  */
-export function isComplete({ lastByte }: Glance, still: Stillness): boolean {
-  if (lastByte !== NEWLINE) return still.seen_ms >= PATIENCE_MS;
+export function isComplete({ kind, lastByte }: Glance, still: Stillness): boolean {
+  if (kind !== 'text' || lastByte !== NEWLINE) return still.seen_ms >= PATIENCE_MS;
   return Math.max(still.byFileTime_ms, still.seen_ms) >= QUIET_MS;
 }

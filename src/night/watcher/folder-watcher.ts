@@ -2,8 +2,9 @@ import { type FSWatcher as FolderHandle, watch as watchFolder } from 'node:fs';
 import { lstat, readdir, stat } from 'node:fs/promises';
 import { basename, dirname, join, resolve } from 'node:path';
 import { type FSWatcher, watch as watchParent } from 'chokidar';
-import { isComplete } from './completeness.js';
+import { type Glance, isComplete } from './completeness.js';
 import { glance, isRefusal, type Refusal, readWhole } from './safe-file.js';
+import { reachesItsEnd } from './self-ending.js';
 
 export interface WatchHandlers {
   /** A finished file, or one that changed since it was read. Awaited before the next is read. */
@@ -17,6 +18,13 @@ export interface WatchHandlers {
 
 /** Names that writers use for what is not finished, and hidden files. */
 const UNFINISHED = /^\.|~$|\.(?:tmp|temp|part|partial|filepart|crdownload|swp|lock)$/i;
+
+/** A waiting file as it is, since when, and whether it has still to be looked into for its end. */
+interface Sighting {
+  readonly key: string;
+  readonly since_ms: number;
+  ending: 'not-looked-for' | 'still-growing' | 'not-reached';
+}
 
 const SETTLE_MS = 10;
 const RECHECK_MS = 40;
@@ -35,8 +43,8 @@ export class FolderWatcher {
   /** Which folder the handle watches: number and birth, as one made anew may get the old number. */
   private watched: string | undefined;
   private readonly waiting = new Set<string>();
-  /** Since when each waiting file has been as it is. */
-  private readonly seen = new Map<string, { readonly key: string; readonly since_ms: number }>();
+  /** The waiting files as they are. */
+  private readonly seen = new Map<string, Sighting>();
   /** Size and time of each file when it was last delivered or refused. */
   private readonly done = new Map<string, string>();
   private timer: NodeJS.Timeout | undefined;
@@ -180,8 +188,10 @@ export class FolderWatcher {
     if (isRefusal(seen)) return this.refuse(name, seen, seen.code);
     const key = keyOf(seen.bytes, seen.modified_ms);
     if (this.done.get(name) === key) return true;
-    const still = { byFileTime_ms: Date.now() - seen.modified_ms, seen_ms: this.seenFor_ms(name, key) };
-    if (!isComplete(seen, still)) return false;
+    const sighting = this.sightingOf(name, key);
+    const seen_ms = performance.now() - sighting.since_ms;
+    const still = { byFileTime_ms: Date.now() - seen.modified_ms, seen_ms };
+    if (!isComplete(seen, still) && !(await this.isWhole(path, seen, sighting))) return false;
     const bytes = await readWhole(path);
     if (bytes === undefined) return true;
     if (isRefusal(bytes)) return this.refuse(name, bytes, key);
@@ -190,12 +200,25 @@ export class FolderWatcher {
     return true;
   }
 
-  /** How long the file has been as it is now, by a clock that nobody sets. */
-  private seenFor_ms(name: string, key: string): number {
+  /** The file as it is now, and since when, by a clock that nobody sets. */
+  private sightingOf(name: string, key: string): Sighting {
     const known = this.seen.get(name);
-    if (known?.key === key) return performance.now() - known.since_ms;
-    this.seen.set(name, { key, since_ms: performance.now() });
-    return 0;
+    if (known?.key === key) return known;
+    const ending = known === undefined ? 'not-looked-for' : 'still-growing';
+    const sighting: Sighting = { key, since_ms: performance.now(), ending };
+    this.seen.set(name, sighting);
+    return sighting;
+  }
+
+  /**
+   * Looks into a file at first sight, and then once each time it has stopped growing: unpacking a large one again and
+   * again while it comes would hold up the others.
+   */
+  private async isWhole(path: string, seen: Glance, sighting: Sighting): Promise<boolean> {
+    const { ending } = sighting;
+    sighting.ending = ending === 'still-growing' ? 'not-looked-for' : 'not-reached';
+    if (ending !== 'not-looked-for') return false;
+    return await reachesItsEnd(path, seen);
   }
 
   private refuse(name: string, refusal: Refusal, key: string): true {

@@ -2,7 +2,8 @@ import { constants } from 'node:fs';
 import { type FileHandle, lstat, open } from 'node:fs/promises';
 import { LIMITS } from '../../catalogue/limits.js';
 import type { ProblemCode } from '../../catalogue/problem-codes.js';
-import type { Glance } from './completeness.js';
+import { isFits, isGzip, KIND_BYTES } from '../../catalogue/readers/file-kind.js';
+import type { EndingKind, Glance } from './completeness.js';
 
 /** Why a file was not read. */
 export interface Refusal {
@@ -10,21 +11,29 @@ export interface Refusal {
   readonly seen: string;
 }
 
-/** Looks at a file in a watched folder: size, time, last byte. Undefined when it is gone, or a folder. */
+/** Looks at a file in a watched folder: kind, size, time, last byte. Undefined when it is gone, or a folder. */
 export async function glance(path: string): Promise<Glance | Refusal | undefined> {
   const entry = await lstat(path).catch(() => undefined);
   if (entry?.isDirectory()) return undefined;
   // A link may lead anywhere, out of the folder too; only `classify`, which is given names, follows one.
   if (entry?.isSymbolicLink()) return { code: 'not-regular', seen: 'this is a link' };
   return await withRegularFile(path, async (file, status) => {
+    const first = Buffer.alloc(KIND_BYTES);
+    await file.read(first, 0, KIND_BYTES, 0);
     const last = Buffer.alloc(1);
     if (status.size > 0) await file.read(last, 0, 1, status.size - 1);
     return {
+      kind: kindOf(first),
       bytes: status.size,
       modified_ms: status.mtimeMs,
       lastByte: status.size > 0 ? last[0] : undefined,
     };
   });
+}
+
+function kindOf(first: Uint8Array): EndingKind {
+  if (isGzip(first)) return 'gzip';
+  return isFits(first) ? 'fits' : 'text';
 }
 
 /** Reads a whole file, up to the limit. Undefined when it is gone. */
@@ -48,7 +57,7 @@ export async function readWhole(path: string): Promise<Uint8Array | Refusal | un
 }
 
 /** Opens without waiting, so that a pipe or device cannot hang the night, and goes on with regular files only. */
-async function withRegularFile<T>(
+export async function withRegularFile<T>(
   path: string,
   use: (file: FileHandle, status: { size: number; mtimeMs: number }) => Promise<T>,
 ): Promise<T | Refusal | undefined> {

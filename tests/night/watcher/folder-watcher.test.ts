@@ -13,7 +13,12 @@ import {
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
-import { isComplete, PATIENCE_MS, QUIET_MS } from '../../../src/night/watcher/completeness.js';
+import {
+  type EndingKind,
+  isComplete,
+  PATIENCE_MS,
+  QUIET_MS,
+} from '../../../src/night/watcher/completeness.js';
 import { FolderWatcher } from '../../../src/night/watcher/folder-watcher.js';
 
 let parent: string;
@@ -184,8 +189,12 @@ describe('FolderWatcher', () => {
 });
 
 describe('the rule of completeness', () => {
-  const at = (byFileTime_ms: number, seen_ms: number, lastByte: number | undefined) =>
-    isComplete({ bytes: 10, modified_ms: 1000, lastByte }, { byFileTime_ms, seen_ms });
+  const at = (
+    byFileTime_ms: number,
+    seen_ms: number,
+    lastByte: number | undefined,
+    kind: EndingKind = 'text',
+  ) => isComplete({ kind, bytes: 10, modified_ms: 1000, lastByte }, { byFileTime_ms, seen_ms });
   it('a closing newline needs a little quiet', () => {
     expect(at(QUIET_MS - 1, 0, 10)).toBe(false);
     expect(at(QUIET_MS, 0, 10)).toBe(true);
@@ -199,6 +208,12 @@ describe('the rule of completeness', () => {
     expect(at(-5000, QUIET_MS - 1, 10)).toBe(false);
     expect(at(-5000, QUIET_MS, 10)).toBe(true);
     expect(at(-5000, PATIENCE_MS, 49)).toBe(true);
+  });
+  it('a newline at the end of a FITS or gzip file means nothing', () => {
+    for (const kind of ['fits', 'gzip'] as const) {
+      expect(at(3_600_000, PATIENCE_MS - 1, 10, kind)).toBe(false);
+      expect(at(0, PATIENCE_MS, 10, kind)).toBe(true);
+    }
   });
   it('an empty file is given the same patience', () => {
     expect(at(0, PATIENCE_MS - 1, undefined)).toBe(false);
