@@ -31,6 +31,7 @@ export class DistanceTerm {
   private readonly smoothed: SmoothedTable[];
   /** Which table serves a group: groups of one width share theirs unless their motion sets them apart. */
   private readonly tableOf: Uint8Array;
+  private wasPlain = false;
 
   constructor(
     private readonly lengthScale_pc: number,
@@ -123,11 +124,13 @@ export class DistanceTerm {
         prior[i] = latticeVolume[i] * norm * fallingExponential(0.5 * misfit * misfit);
       }
     }
-    this.smooth(!hasParallax && !Number.isNaN(motion_masPerYr) ? motion_masPerYr : Number.NaN, variances);
+    const isPlain = !hasParallax && Number.isNaN(motion_masPerYr);
+    this.smooth(hasParallax ? Number.NaN : motion_masPerYr, variances, isPlain);
+    this.wasPlain = isPlain;
   }
 
   /** Fills one table for each width, and for each kind of motion where a proper motion is given (not NaN). */
-  private smooth(motion_masPerYr: number, variances: Float64Array): void {
+  private smooth(motion_masPerYr: number, variances: Float64Array, isPlain: boolean): void {
     const usesMotion = !Number.isNaN(motion_masPerYr);
     for (let group = 0; group < this.groups.length; group++) {
       const { kinematics } = this.groups[group];
@@ -138,6 +141,8 @@ export class DistanceTerm {
       }
       this.tableOf[group] = table;
       if (table < group) continue;
+      // Stars of which nothing is known but their brightness have one and the same prior.
+      if (isPlain && this.wasPlain && this.smoothed[group].variance_mag2 === variances[group]) continue;
       const prior = usesMotion ? this.withMotion(motion_masPerYr, kinematics) : this.prior;
       this.smoothed[group].fill(prior, this.start, this.end, variances[group]);
     }
@@ -180,14 +185,14 @@ const FARTHEST_LENGTHS = 15;
 const PARALLAX_REACH_SIGMA = 6;
 const TWO_PI = 2 * Math.PI;
 /** The smoothing kernel and the table reach this many sigma. */
-const REACH_SIGMA = 4.5;
+const REACH_SIGMA = 4.2;
 const KERNEL_LIMIT = 64;
 
 /** The prior convolved with one Gaussian of variance s^2. */
 class SmoothedTable {
   private margin = 0;
   private count = 0;
-  private variance_mag2 = 0;
+  variance_mag2 = 0;
   private readonly table: Float64Array;
   private readonly kernel = new Float64Array(KERNEL_LIMIT + 1);
 

@@ -12,6 +12,11 @@ const LEAST_MOTION = 1e-6;
 const TWO_PI = 2 * Math.PI;
 const MOST_BRANCHES = 8;
 
+/** Variances that differ by less than two per cent share a table. */
+function inSteps(variance_mag2: number): number {
+  return Math.exp(Math.round(Math.log(variance_mag2) * 50) / 50);
+}
+
 /**
  * Weighs nodes by the distance they need: in the field by parallax and space density, in the cluster (where there is
  * one) by its modulus, over the branches of a sequence. Results stay in the public fields until the next call.
@@ -53,7 +58,7 @@ export class JointDistance {
   prepare(star: StarData, limit_chi2: number): void {
     const photometric = star.offsetVariance_mag2();
     for (let g = 0; g < this.variances.length; g++) {
-      this.variances[g] = this.model.distanceGroups[g].scatterVariance_mag2 + photometric;
+      this.variances[g] = inSteps(this.model.distanceGroups[g].scatterVariance_mag2 + photometric);
     }
     // In a cluster field the motion has another use: it tells members.
     const motion = this.isCluster ? Number.NaN : Math.hypot(star.pmRa_masPerYear, star.pmDec_masPerYear);

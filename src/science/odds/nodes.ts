@@ -53,7 +53,7 @@ interface Scatter {
  * from the precision the tables claim (0.01-0.03 mag) and the spread of metallicities.
  */
 const SCATTER: Readonly<Record<ModelledClass, Scatter>> = {
-  V: { magnitude_mag: 0.28, band_mag: 0.025 },
+  V: { magnitude_mag: 0.3, band_mag: 0.025 },
   IV: { magnitude_mag: 0.45, band_mag: 0.03 },
   III: { magnitude_mag: 0.65, band_mag: 0.03 },
   II: { magnitude_mag: 0.65, band_mag: 0.04 },
