@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { directionOf, Ephemeris } from '../../src/follow/sky/ephemeris.js';
+import { directionOf } from '../../src/follow/sky/direction.js';
+import { Ephemeris } from '../../src/follow/sky/ephemeris.js';
 import { airmass } from '../../src/science/sky/airmass.js';
 import { parseTable } from '../../src/science/table.js';
 import text from './data/checks_altaz.csv';

@@ -134,6 +134,8 @@ function toProfile(file: ProfileFile): Profile {
       minAltitude_deg: file.site.min_altitude_deg,
       maxAirmass: file.site.max_airmass,
       sunLimit_deg: file.site.sun_limit_deg,
+      zenithLimit_deg: file.site.zenith_limit_deg,
+      horizon: file.site.horizon,
       moonDistance_deg: file.site.moon_distance_deg,
       seeing_arcsec: file.site.seeing_arcsec,
     },
