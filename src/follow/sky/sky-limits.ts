@@ -1,4 +1,6 @@
+import { standardAir } from '../../science/sky/air.js';
 import { altitudeOfAirmass_deg } from '../../science/sky/airmass.js';
+import { refractionFactor } from '../../science/sky/refraction.js';
 import type { Site } from '../settings.js';
 import type { HorizonLine } from './horizon.js';
 
@@ -16,6 +18,8 @@ export interface SkyLimits {
   readonly horizon: HorizonLine;
   /** Sine of the highest corner: above it the horizon need not be looked at. */
   readonly sinHorizonTop: number;
+  /** Of the site's air: corners of a horizon are seen through it, altitudes of paths are without it. */
+  readonly refractionFactor: number;
   readonly cosMoon: number;
   readonly moonDistance_deg: number;
 }
@@ -35,6 +39,7 @@ export function limitsOf(site: Site): SkyLimits {
     zenithLimit_deg: site.zenithLimit_deg,
     horizon: site.horizon,
     sinHorizonTop: Math.sin(top_deg * RADIAN),
+    refractionFactor: refractionFactor(standardAir(site.height_m)),
     cosMoon: Math.cos(site.moonDistance_deg * RADIAN),
     moonDistance_deg: site.moonDistance_deg,
   };

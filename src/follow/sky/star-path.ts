@@ -1,3 +1,4 @@
+import { refraction_deg } from '../../science/sky/refraction.js';
 import { azimuthOf_deg, type Direction, dot, type HorizonAxes } from './direction.js';
 import { horizonAltitude_deg } from './horizon.js';
 import type { SkyLimits } from './sky-limits.js';
@@ -115,6 +116,8 @@ export class StarPath {
       this.frame.grid.at(this.north, time_ms),
       this.frame.grid.at(this.west, time_ms),
     );
-    return Math.asin(Math.max(-1, up)) / RADIAN >= horizonAltitude_deg(limits.horizon, azimuth_deg);
+    const altitude_deg = Math.asin(Math.max(-1, up)) / RADIAN;
+    const seen_deg = altitude_deg + limits.refractionFactor * refraction_deg(altitude_deg);
+    return seen_deg >= horizonAltitude_deg(limits.horizon, azimuth_deg);
   }
 }

@@ -1,9 +1,12 @@
 import { airmass } from '../../science/sky/airmass.js';
+import { parallacticAngle_deg } from '../../science/sky/parallactic-angle.js';
 import type { Site } from '../settings.js';
 import {
   altitudeIn_deg,
+  azimuthOf_deg,
   type Direction,
   directionOf,
+  dot,
   type HorizonAxes,
   separation_deg,
 } from './direction.js';
@@ -127,6 +130,14 @@ export class NightSky {
       separation_deg: separation_deg(moment.moon, direction),
       targetZenithDistance_deg: 90 - altitudeIn_deg(moment.axes.up, direction),
     };
+  }
+
+  /** Position angle of the zenith at a target, degrees, at the nearest point of the grid as in `geometryAt`. */
+  parallacticAngle_deg(ra_deg: number, dec_deg: number, time_ms: number): number {
+    const { axes } = this.momentOf(time_ms);
+    const direction = this.toApparent(directionOf(ra_deg, dec_deg));
+    const azimuth_deg = azimuthOf_deg(dot(axes.north, direction), dot(axes.west, direction));
+    return parallacticAngle_deg(this.site.latitude_deg, altitudeIn_deg(axes.up, direction), azimuth_deg);
   }
 
   /** What is the same for all stars at one time: from the grid where it reaches, else worked out and kept. */
