@@ -22,23 +22,32 @@ interface Cell {
 export class Job {
   /** Shortest time on target; infinite where it fits nowhere. */
   readonly shortest_ms: number;
+  /** Latest start in a cell or any before it: the cells to skip are found by halving. */
+  private readonly reach_ms: Float64Array;
+  /** Shortest time on target in a cell or any after it. */
+  private readonly least_ms: Float64Array;
 
   constructor(
     readonly id: string,
     private readonly cells: readonly Cell[],
   ) {
-    this.shortest_ms = cells.reduce(
-      (least, cell) => Math.min(least, cell.duration_ms),
-      Number.POSITIVE_INFINITY,
-    );
+    this.reach_ms = Float64Array.from(cells, ({ to_ms }) => to_ms);
+    this.least_ms = Float64Array.from(cells, ({ duration_ms }) => duration_ms);
+    for (let i = 1; i < cells.length; i++) {
+      this.reach_ms[i] = Math.max(this.reach_ms[i], this.reach_ms[i - 1]);
+      const k = cells.length - 1 - i;
+      this.least_ms[k] = Math.min(this.least_ms[k], this.least_ms[k + 1]);
+    }
+    this.shortest_ms = this.least_ms[0] ?? Number.POSITIVE_INFINITY;
   }
 
   /** Earliest finish when the slew begins at `ready_ms` or later; infinite: not at all. */
   earliestFinish_ms(ready_ms: number, setup_ms: number): number {
+    const { cells } = this;
     let best = Number.POSITIVE_INFINITY;
-    for (const cell of this.cells) {
-      if (cell.from_ms + this.shortest_ms >= best) break;
-      best = Math.min(best, startIn(cell, ready_ms, setup_ms) + cell.duration_ms);
+    for (let i = this.firstReaching(ready_ms + setup_ms); i < cells.length; i++) {
+      if (cells[i].from_ms + this.least_ms[i] >= best) break;
+      best = Math.min(best, startIn(cells[i], ready_ms, setup_ms) + cells[i].duration_ms);
     }
     return best;
   }
@@ -46,7 +55,9 @@ export class Job {
   /** Latest time to begin the slew so that all is finished by a time; minus infinity: never. */
   latestReady_ms(finish_ms: number, setup_ms: number): number {
     let latest = Number.NEGATIVE_INFINITY;
-    for (const cell of this.cells) {
+    const last = this.lastBeginning(finish_ms - this.shortest_ms);
+    for (let i = last; i >= 0 && this.reach_ms[i] - setup_ms > latest; i--) {
+      const cell = this.cells[i];
       const start = Math.min(cell.to_ms, finish_ms - cell.duration_ms);
       if (start >= Math.max(cell.from_ms, cell.open_ms + setup_ms))
         latest = Math.max(latest, start - setup_ms);
@@ -61,6 +72,28 @@ export class Job {
       .filter(cell => startIn(cell, ready_ms, setup_ms) + cell.duration_ms === finish)
       .map(cell => startIn(cell, ready_ms, setup_ms));
     return Number.isFinite(finish) ? Math.max(...starts) : Number.NaN;
+  }
+
+  /** Last cell that begins by a time; -1 where there is none. */
+  private lastBeginning(time_ms: number): number {
+    let [low, high] = [0, this.cells.length];
+    while (low < high) {
+      const middle = (low + high) >> 1;
+      if (this.cells[middle].from_ms <= time_ms) low = middle + 1;
+      else high = middle;
+    }
+    return low - 1;
+  }
+
+  /** First cell in which, or before which, something can be begun at a time or later. */
+  private firstReaching(time_ms: number): number {
+    let [low, high] = [0, this.cells.length];
+    while (low < high) {
+      const middle = (low + high) >> 1;
+      if (this.reach_ms[middle] < time_ms) low = middle + 1;
+      else high = middle;
+    }
+    return low;
   }
 }
 

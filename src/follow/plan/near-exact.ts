@@ -4,7 +4,7 @@ import { Random } from './random.js';
 import { Route } from './route.js';
 
 /** Places tested in all: the bound of the work, the same on every machine. */
-const MOST_TESTS = 400_000;
+const MOST_TESTS = 250_000;
 /** Share of the order that is taken out at most in one round. */
 const LARGEST_RUIN = 0.5;
 /** Losses accepted at the beginning and at the end, in units of a middling merit. */

@@ -35,12 +35,12 @@ export class StarPath {
     private readonly frame: NightFrame,
     direction: Direction,
   ) {
-    this.sinAltitude = Float64Array.from(frame.axes, ({ up }) => dot(up, direction));
-    this.cosMoonDistance = Float64Array.from(frame.moon, moon => dot(moon, direction));
+    this.sinAltitude = along(frame.axes.length, i => dot(frame.axes[i].up, direction));
+    this.cosMoonDistance = along(frame.moon.length, i => dot(frame.moon[i], direction));
     // Only a horizon asks for azimuths.
-    const axes = frame.limits.horizon.length > 0 ? frame.axes : [];
-    this.north = Float64Array.from(axes, ({ north }) => dot(north, direction));
-    this.west = Float64Array.from(axes, ({ west }) => dot(west, direction));
+    const points = frame.limits.horizon.length > 0 ? frame.axes.length : 0;
+    this.north = along(points, i => dot(frame.axes[i].north, direction));
+    this.west = along(points, i => dot(frame.axes[i].west, direction));
   }
 
   /** When it is within all limits. */
@@ -120,4 +120,11 @@ export class StarPath {
     const seen_deg = altitude_deg + limits.refractionFactor * refraction_deg(altitude_deg);
     return seen_deg >= horizonAltitude_deg(limits.horizon, azimuth_deg);
   }
+}
+
+/** A value at each point of the grid; `Float64Array.from` is far slower. */
+function along(points: number, value: (i: number) => number): Float64Array {
+  const values = new Float64Array(points);
+  for (let i = 0; i < points; i++) values[i] = value(i);
+  return values;
 }

@@ -61,10 +61,10 @@ export class TimeGrid {
 
   /** Vertex of the values' parabolas between the points i-1 and i; NaN where they only rise or sink. */
   private peakBetween(values: ArrayLike<number>, i: number): number {
-    for (const k of [i - 1, i]) {
+    for (let k = i - 1; k <= i; k++) {
       if (k < 1 || k > this.times.length - 2) continue;
-      const [a, b, c] = [values[k - 1], values[k], values[k + 1]];
-      const peak = this.times[k] + ((a - c) / (2 * (a - 2 * b + c))) * this.step_ms;
+      const bend = values[k - 1] - 2 * values[k] + values[k + 1];
+      const peak = this.times[k] + ((values[k - 1] - values[k + 1]) / (2 * bend)) * this.step_ms;
       if (peak >= this.times[i - 1] && peak <= this.times[i]) return peak;
     }
     return Number.NaN;
