@@ -31,12 +31,14 @@ export function whyNever(path: StarPath, frame: NightFrame, sunLimit_deg: number
 }
 
 /** Why a window ends at a time, to go before 'at 02:14 UT'. */
-export function whyEnds(path: StarPath, { grid, limits }: NightFrame, until_ms: number): string {
+export function whyEnds(path: StarPath, { grid, limits, moonTurns }: NightFrame, until_ms: number): string {
   const after = until_ms + LATER_MS;
   if (after >= grid.until_ms) return 'the dark ends';
   if (!path.isAboveLowest(after)) return `sets below ${limits.lowestWords}`;
   if (!path.isHigh(after)) return "goes behind the site's horizon";
   if (path.isNearZenith(after)) return `comes within ${limits.zenithLimit_deg} deg of the zenith`;
+  if (moonTurns.some(time => Math.abs(time - until_ms) < LATER_MS))
+    return `the Moon rises within ${limits.moonDistance_deg} deg`;
   return `the Moon comes within ${limits.moonDistance_deg} deg`;
 }
 

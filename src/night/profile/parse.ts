@@ -71,7 +71,9 @@ function expectation(issue: z.core.$ZodIssue): string {
         ? 'text in quotes'
         : issue.expected === 'array'
           ? 'a list ([[...]])'
-          : `a ${issue.expected}`;
+          : issue.expected === 'tuple'
+            ? 'a pair ([azimuth, altitude])'
+            : `a ${issue.expected}`;
     case 'invalid_value':
       return `one of ${issue.values.join(', ')}`;
     case 'invalid_union':

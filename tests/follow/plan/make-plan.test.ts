@@ -158,6 +158,36 @@ describe('a plan', () => {
   });
 });
 
+describe('a plan of many', () => {
+  it('keeps a settled start and what is to be first wherever they can be kept alone', () => {
+    fc.assert(
+      fc.property(
+        fc.array(target, { minLength: 14, maxLength: 20 }),
+        night,
+        fc.integer({ min: 100, max: 250 }),
+        (targets, given, pin) => {
+          for (const settled of ['first', pin] as const) {
+            const pinned = targets.map((entry, i) => (i === 3 ? { ...entry, pin: settled } : entry));
+            const none = { merit: 0, windows: [], duration: () => 1 };
+            const alone = planOf(
+              pinned.map((entry, i) => (i === 3 ? entry : none)),
+              given,
+            );
+            const plan = planOf(pinned, given);
+            expectSound(plan, pinned, given);
+            const found = plan.blocks.filter(({ id }) => id === 't3');
+            expect(found.map(({ start_ms }) => start_ms)).toEqual(
+              alone.blocks.map(({ start_ms }) => start_ms),
+            );
+            if (settled === 'first' && found.length > 0) expect(plan.blocks[0]).toEqual(alone.blocks[0]);
+          }
+        },
+      ),
+      { numRuns: 25, seed: 25 },
+    );
+  });
+});
+
 const OPEN: SmallNight = { now: 0, dark: [[0, END]], breaks: [], setup: () => 5 };
 const steady = (
   merit: number,

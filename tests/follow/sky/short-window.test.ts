@@ -157,8 +157,15 @@ describe('what ends a window is told', () => {
     const moon = ephemeris.moonDirection(dawn_ms);
     const moonRa = ((Math.atan2(moon[1], moon[0]) * 180) / Math.PI + 360) % 360;
     expect(whyEnds({ ...SITE, moonDistance_deg: 60 }, moonRa - 20, 30)).toContain(
-      'the Moon comes within 60 deg',
+      'the Moon rises within 60 deg',
     );
+    // The Moon moves by half a degree an hour: a star in its way is free until it is near.
+    const other = nightOf(ephemeris, SITE, Date.UTC(2026, 10, 24, 21));
+    const sky = new NightSky(ephemeris, SITE, other);
+    const [x, y, z] = ephemeris.moonDirection((other.dark.dusk_ms + other.dark.dawn_ms) / 2);
+    const ahead_deg = (Math.atan2(y, x) * 180) / Math.PI + SITE.moonDistance_deg / Math.sqrt(1 - z * z);
+    const ahead = sky.follow((ahead_deg + 360) % 360, (Math.asin(z) * 180) / Math.PI, other.dark.dusk_ms);
+    expect(ahead.spans.map(([, until]) => ahead.whyEnds(until))).toContain('the Moon comes within 30 deg');
   });
 
   it('a star that stays behind the horizon or in the dead zone says so', () => {
