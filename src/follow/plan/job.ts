@@ -22,6 +22,9 @@ interface Cell {
 export class Job {
   /** Shortest time on target; infinite where it fits nowhere. */
   readonly shortest_ms: number;
+  /** Earliest finish and latest start of all. */
+  readonly firstFinish_ms: number;
+  readonly lastStart_ms: number;
   /** Latest start in a cell or any before it: the cells to skip are found by halving. */
   private readonly reach_ms: Float64Array;
   /** Shortest time on target in a cell or any after it. */
@@ -39,6 +42,8 @@ export class Job {
       this.least_ms[k] = Math.min(this.least_ms[k], this.least_ms[k + 1]);
     }
     this.shortest_ms = this.least_ms[0] ?? Number.POSITIVE_INFINITY;
+    this.firstFinish_ms = this.earliestFinish_ms(Number.NEGATIVE_INFINITY, 0);
+    this.lastStart_ms = this.reach_ms.at(-1) ?? Number.NEGATIVE_INFINITY;
   }
 
   /** Earliest finish when the slew begins at `ready_ms` or later; infinite: not at all. */

@@ -4,12 +4,12 @@ import { Random } from './random.js';
 import { Route } from './route.js';
 
 /** Places tested in all: the bound of the work, the same on every machine. */
-const MOST_TESTS = 250_000;
+const MOST_TESTS = 200_000;
 /** Share of the order that is taken out at most in one round. */
 const LARGEST_RUIN = 0.5;
 /** Losses accepted at the beginning and at the end, in units of a middling merit. */
-const WARM = 0.3;
-const COLD = 0.02;
+const WARM = 0.15;
+const COLD = 0.01;
 
 /**
  * Order of a large merit for many jobs: insertion, then rounds of taking some out and putting others in (ruin and recreate,

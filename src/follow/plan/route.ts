@@ -50,8 +50,10 @@ export class Route {
     const { jobs, ready_ms, setup_ms } = this.problem;
     let best: Insertion | undefined;
     for (let place = 0; place <= this.order.length; place++) {
-      this.tests++;
       const ready = place === 0 ? ready_ms : this.finish_ms[place - 1];
+      if (ready > jobs[job].lastStart_ms) break;
+      if (this.bearable_ms[place] < jobs[job].firstFinish_ms) continue;
+      this.tests++;
       const finish = jobs[job].earliestFinish_ms(ready, setup_ms[this.jobBefore(place)][job]);
       if (finish === Number.POSITIVE_INFINITY) continue;
       const next = this.order[place];
