@@ -12,8 +12,8 @@ const BLUE_END = 0.8;
 const LEAST_SHARE = 0.1;
 
 /**
- * What the slit has to be turned to, and how far the blue end moves out of it otherwise; empty where that does not matter
- * or the place of the star is not known.
+ * What the slit has to be turned to, and how far the blue end moves out of it otherwise; empty where that does not
+ * matter or the place of the star is not known.
  */
 export function slitCaution(setup: SpectrographSetup, conditions: Conditions): string {
   const { airmass, parallacticAngle_deg, siteHeight_m } = conditions;

@@ -5,8 +5,8 @@ import { origin, type Problem, weights } from './problem.js';
 export const EXACT_UP_TO = 12;
 
 /**
- * Order of the largest merit, by dynamic programming over sets: of all orders of a set with the same last job only the one
- * that finishes first can matter. Of equal merits the set with more of the previous plan, then the earliest finish.
+ * Order of the largest merit, by dynamic programming over sets: of all orders of a set with the same last job only the
+ * one that finishes first can matter. Of equal merits the set with more of the previous plan, then the earliest finish.
  */
 export function exactOrder(problem: Problem): number[] {
   const { jobs, setup_ms, ready_ms, previous } = problem;

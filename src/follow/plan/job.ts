@@ -16,8 +16,8 @@ interface Cell {
 }
 
 /**
- * When one target can be begun and how long it then takes. Later starts may finish earlier (a rising target), so a finish
- * is the earliest over all starts from some time on: that makes it monotone, and the search over orders exact.
+ * When one target can be begun and how long it then takes. Later starts may finish earlier (a rising target), so a
+ * finish is the earliest over all starts from some time on: that makes it monotone, and the search over orders exact.
  */
 export class Job {
   /** Shortest time on target; infinite where it fits nowhere. */

@@ -10,9 +10,9 @@ import { settledOrder } from './settle.js';
 const LEAST_MERIT = 1e-3;
 
 /**
- * Lays targets into the rest of a night so that the merit observed to the end is as large as can be: proven so up to twelve
- * that fit at all, close to it above. The same input gives the same plan. Of equal plans the one nearest to `previous`.
- * A target under way is not for this call, which begins (`now_ms`) when that one ends.
+ * Lays targets into the rest of a night so that the merit observed to the end is as large as can be: proven so up to
+ * twelve that fit at all, close to it above. The same input gives the same plan. Of equal plans the one nearest to
+ * `previous`. A target under way is not for this call, which begins (`now_ms`) when that one ends.
  */
 export function makePlan(targets: readonly PlanTarget[], night: PlanNight, previous?: Plan): Plan {
   const jobs = targets.map(target => jobOf(target, night));

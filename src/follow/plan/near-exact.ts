@@ -12,8 +12,8 @@ const WARM = 0.15;
 const COLD = 0.01;
 
 /**
- * Order of a large merit for many jobs: insertion, then rounds of taking some out and putting others in (ruin and recreate,
- * Schrimpf et al. 2000, J. Comput. Phys. 159, 139), in which small losses are accepted ever more rarely.
+ * Order of a large merit for many jobs: insertion, then rounds of taking some out and putting others in (ruin and
+ * recreate, Schrimpf et al. 2000, J. Comput. Phys. 159, 139), in which small losses are accepted ever more rarely.
  */
 export function nearExactOrder(problem: Problem): readonly number[] {
   const random = new Random(problem.jobs.length);

@@ -7,8 +7,8 @@ export interface Insertion {
 }
 
 /**
- * An order with, for each place, the earliest finish and the latest finish that what follows can bear. With both kept, an
- * insertion is tested in constant time (after the push-forward of Savelsbergh 1992, ORSA J. Computing 4, 146).
+ * An order with, for each place, the earliest finish and the latest finish that what follows can bear. With both kept,
+ * an insertion is tested in constant time (after the push-forward of Savelsbergh 1992, ORSA J. Computing 4, 146).
  */
 export class Route {
   private order: number[] = [];

@@ -2,8 +2,8 @@ import type { Problem } from './problem.js';
 import { Route } from './route.js';
 
 /**
- * The jobs of an order once more, now in the sequence of the previous plan with the new ones put in between, if they all fit
- * that way: nothing moves that need not.
+ * The jobs of an order once more, now in the sequence of the previous plan with the new ones put in between, if they
+ * all fit that way: nothing moves that need not.
  */
 export function settledOrder(order: readonly number[], problem: Problem): readonly number[] {
   const chosen = new Set(order);

@@ -2,7 +2,10 @@ import type { Site } from '../settings.js';
 
 export type HorizonLine = Site['horizon'];
 
-/** Altitude as seen, refraction included, of the line at an azimuth, straight between the corners and round through north; 0 without corners. */
+/**
+ * Altitude as seen, refraction included, of the line at an azimuth, straight between the corners and round through
+ * north; 0 without corners.
+ */
 export function horizonAltitude_deg(line: HorizonLine, azimuth_deg: number): number {
   if (line.length === 0) return 0;
   const next = Math.max(

@@ -41,7 +41,9 @@ export class TimeGrid {
     return b + ((c - a) / 2) * x + ((a - 2 * b + c) / 2) * x * x;
   }
 
-  /** When smooth values pass a level, in order of time; both passings of a step that begins and ends on the same side. */
+  /**
+   * When smooth values pass a level, in order of time; both passings of a step that begins and ends on the same side.
+   */
   crossings(values: ArrayLike<number>, level: number): number[] {
     const isBelow = (time_ms: number) => this.at(values, time_ms) < level;
     const found: number[] = [];

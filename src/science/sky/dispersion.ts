@@ -4,8 +4,8 @@ const ARCSEC_PER_RADIAN = 206_265;
 const MMHG_PER_HPA = 0.750062;
 
 /**
- * How far higher light of a wavelength is seen than light of another, arcsec: Filippenko 1982, PASP 94, 715, eqs 1-4, with
- * Edlen's refractive index; for a plane atmosphere, good to 2 % at zenith distances up to 75 degrees.
+ * How far higher light of a wavelength is seen than light of another, arcsec: Filippenko 1982, PASP 94, 715, eqs 1-4,
+ * with Edlen's refractive index; for a plane atmosphere, good to 2 % at zenith distances up to 75 degrees.
  */
 export function dispersion_arcsec(
   wavelength_nm: number,

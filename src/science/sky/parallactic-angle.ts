@@ -2,8 +2,9 @@ const RADIAN = Math.PI / 180;
 
 /**
  * Position angle of the zenith at a star, from north through east, -180 to 180 degrees: the four parts formula in the
- * triangle of pole, zenith and star, which is tan q = sin H / (tan phi cos dec - sin dec cos H) (Meeus 1998, Astronomical
- * Algorithms, eq. 14.1) in terms of altitude and azimuth (from north through east). Not defined at zenith and pole.
+ * triangle of pole, zenith and star, which is tan q = sin H / (tan phi cos dec - sin dec cos H) (Meeus 1998,
+ * Astronomical Algorithms, eq. 14.1) in terms of altitude and azimuth (from north through east). Not defined at zenith
+ * and pole.
  */
 export function parallacticAngle_deg(
   latitude_deg: number,

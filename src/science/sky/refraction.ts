@@ -1,8 +1,8 @@
 import type { Air } from './air.js';
 
 /**
- * How much the air lifts a star, degrees, by its airless altitude: Saemundsson 1986, Sky & Telescope 72, 70, as in Meeus 1998,
- * Astronomical Algorithms, eq. 16.4, for 1010 hPa and 10 C. Good to 0.1 arcmin above -1 degree; NaN below.
+ * How much the air lifts a star, degrees, by its airless altitude: Saemundsson 1986, Sky & Telescope 72, 70, as in
+ * Meeus 1998, Astronomical Algorithms, eq. 16.4, for 1010 hPa and 10 C. Good to 0.1 arcmin above -1 degree; NaN below.
  */
 export function refraction_deg(trueAltitude_deg: number): number {
   if (!(trueAltitude_deg >= -1)) return Number.NaN;
