@@ -40,11 +40,14 @@ function siteLines({ name, site, telescope, field }: Profile): string[] {
   const area_m2 = collectingArea_cm2(telescope.aperture_m, telescope.obstruction) / 1e4;
   const latitude = `${Math.abs(site.latitude_deg).toFixed(2)} ${site.latitude_deg < 0 ? 'S' : 'N'}`;
   const longitude = `${Math.abs(site.longitude_deg).toFixed(2)} ${site.longitude_deg < 0 ? 'W' : 'E'}`;
+  const top_deg = Math.max(0, ...site.horizon.map(([, altitude_deg]) => altitude_deg));
+  const horizon = top_deg > 0 ? `, horizon up to ${top_deg} deg` : '';
+  const zenith = site.zenithLimit_deg > 0 ? `, not within ${site.zenithLimit_deg} deg of the zenith` : '';
   return [
     `${name}: the profile is in order`,
     `site       ${site.name}, ${latitude}, ${longitude}, ${site.height_m} m`,
     `telescope  ${telescope.aperture_m} m, collecting area ${area_m2.toFixed(3)} m2`,
-    `limits     altitude ${site.minAltitude_deg} deg, airmass ${site.maxAirmass}, Sun below ${site.sunLimit_deg} deg, Moon at ${site.moonDistance_deg} deg`,
+    `limits     altitude ${site.minAltitude_deg} deg, airmass ${site.maxAirmass}, Sun below ${site.sunLimit_deg} deg, Moon at ${site.moonDistance_deg} deg${horizon}${zenith}`,
     `field      ${field.name}, ${field.population}${Number.isNaN(field.modulus_mag) ? '' : `, modulus ${field.modulus_mag} mag`}, ${dustWords(field)}`,
   ];
 }

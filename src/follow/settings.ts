@@ -15,6 +15,10 @@ export interface Site {
   readonly maxAirmass: number;
   /** Sun's altitude below which follow-up exposures may run. */
   readonly sunLimit_deg: number;
+  /** Dead zone of the mount round the zenith, radius in degrees; 0: none. */
+  readonly zenithLimit_deg: number;
+  /** What stands round the telescope: corners of azimuth (from north through east) and altitude as seen; [] none. */
+  readonly horizon: readonly (readonly [azimuth_deg: number, altitude_deg: number])[];
   /** Never suggest a target nearer the Moon than this. */
   readonly moonDistance_deg: number;
   /** Zenith seeing in the absence of a measured one. */

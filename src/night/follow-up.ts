@@ -61,13 +61,16 @@ export class FollowUpDesk {
     const next = spans.find(([, until]) => now_ms < until);
     const isUp = next !== undefined && next[0] <= now_ms;
     const when_ms = next === undefined || isUp ? now_ms : next[0];
-    const geometry = this.sky.at(now_ms).geometryAt(positions.ra_deg[star], positions.dec_deg[star], when_ms);
+    const place = [positions.ra_deg[star], positions.dec_deg[star], when_ms] as const;
+    const sky = this.sky.at(now_ms);
+    const geometry = sky.geometryAt(...place);
     const airmassLater =
       next === undefined ? profile.site.maxAirmass : airmass(90 - geometry.targetZenithDistance_deg);
     const bandV = profile.bands.find(entry => entry.band === 'V');
     const { measured } = this.current();
     return {
       airmass: isUp ? tonight.airmassNow : airmassLater,
+      parallacticAngle_deg: sky.parallacticAngle_deg(...place),
       seeing_arcsec: measured.seeing_arcsec(),
       siteHeight_m: profile.site.height_m,
       cloud_mag: measured.cloud_mag(),

@@ -8,6 +8,7 @@ import { buildModel, classifyStars, makeOddsColumns, type StarInputs } from '../
 import { CellWriter } from '../../src/screens/terminal/cell-writer.js';
 import { OPEN_FIELD } from '../support/star-inputs.js';
 import { astropySeconds, fitsTable, READINGS } from './fits.js';
+import { planOfSixty, windowsOfMany } from './night.js';
 import { numpyStarsPerSecond } from './odds-reference.js';
 
 /** Prints how long the heavy steps take on this machine, and ratios that mean something on any: npm run bench. */
@@ -120,6 +121,15 @@ if (frame !== undefined) {
   );
   line('second frame matched by position', second, STARS, 'rows');
 }
+
+// The first round warms up.
+planOfSixty(windowsOfMany(false));
+const [tonight, windowSeconds] = await timed(() => windowsOfMany(false));
+console.log(`windows of 2,000 stars: ${(1000 * windowSeconds).toFixed(0)} ms`);
+const [, horizonSeconds] = await timed(() => windowsOfMany(true));
+console.log(`windows of 2,000 stars over a horizon of 36 corners: ${(1000 * horizonSeconds).toFixed(0)} ms`);
+const [placed, planSeconds] = await timed(() => planOfSixty(tonight));
+console.log(`plan of 60 targets: ${(1000 * planSeconds).toFixed(0)} ms (${placed} placed)`);
 
 const writer = new CellWriter(80, 24);
 const screen = (row: number, clock: string) =>

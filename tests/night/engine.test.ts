@@ -176,6 +176,22 @@ describe('a night of three stars', () => {
     expect(detail.lightCurves).toHaveLength(2);
   });
 
+  it('low in the west a spectrum is told the angle of its slit, within the precession since J2000', async () => {
+    const { maker } = await whole();
+    const caution = (time_ms: number) => maker.detail(0, time_ms).exposures[1].caution;
+    expect(caution(NOW)).toBe('');
+    const late = Date.parse('2026-11-09T02:30:00Z');
+    // Sidereal time: Meeus 1998, eq. 12.4; the angle: eq. 14.1.
+    const sidereal_deg = 280.46062 + 360.98564737 * (late / 86_400_000 + 2_440_587.5 - 2_451_545) + 9.3;
+    const radian = Math.PI / 180;
+    const [hour, dec, phi] = [(sidereal_deg - 30) * radian, 45 * radian, 46.2 * radian];
+    const along = Math.tan(phi) * Math.cos(dec) - Math.sin(dec) * Math.cos(hour);
+    const expected_deg = Math.atan2(Math.sin(hour), along) / radian;
+    const [, airmass, angle] = /at airmass ([\d.]+) set it to (\d+) deg/.exec(caution(late)) ?? [];
+    expect(Number(airmass)).toBeGreaterThan(1.3);
+    expect(Math.abs(Number(angle) - expected_deg)).toBeLessThan(1.5);
+  });
+
   it('exposures follow the seeing of the newest frames', async () => {
     const good = await whole();
     const poor = await night(

@@ -1,6 +1,9 @@
 import { describe, expect, it } from 'vitest';
-import { directionOf, Ephemeris } from '../../src/follow/sky/ephemeris.js';
+import { directionOf } from '../../src/follow/sky/direction.js';
+import { Ephemeris } from '../../src/follow/sky/ephemeris.js';
 import { airmass } from '../../src/science/sky/airmass.js';
+import { parallacticAngle_deg } from '../../src/science/sky/parallactic-angle.js';
+import { refraction_deg } from '../../src/science/sky/refraction.js';
 import { parseTable } from '../../src/science/table.js';
 import text from './data/checks_altaz.csv';
 
@@ -26,6 +29,14 @@ describe('altitude, azimuth, Sun and Moon against Astropy', () => {
       expect(turn * cosine).toBeLessThan(0.001);
       if (!Number.isNaN(row.number('X_y94_true'))) {
         expect(Math.abs(airmass(place.altitude_deg) / row.number('X_y94_true') - 1)).toBeLessThan(0.001);
+      }
+      const q = parallacticAngle_deg(row.number('lat_deg'), place.altitude_deg, place.azimuth_deg);
+      expect(Math.abs(((q - row.number('parang_deg') + 540) % 360) - 180)).toBeLessThan(0.05);
+      if (!Number.isNaN(row.number('refr_arcmin'))) {
+        const refraction_arcmin = 60 * refraction_deg(place.altitude_deg);
+        expect(Math.abs(refraction_arcmin - row.number('refr_arcmin'))).toBeLessThan(0.002);
+        const seen_deg = place.altitude_deg + refraction_arcmin / 60;
+        expect(Math.abs(seen_deg - row.number('alt_app_deg'))).toBeLessThan(0.001);
       }
       expect(Math.abs(ephemeris.moonAltitude_deg(time_ms) - row.number('moon_alt_deg'))).toBeLessThan(0.01);
       expect(Math.abs(ephemeris.sunAltitude_deg(time_ms) - row.number('sun_alt_deg'))).toBeLessThan(0.003);

@@ -9,8 +9,11 @@ import {
   slitSkyRate_ePerSPerPixel,
   spectralRate_ePerSPerPixel,
 } from '../../src/science/photometry/spectrum.js';
+import { dispersion_arcsec } from '../../src/science/sky/dispersion.js';
 import { type Calculation, type Check, readChecks, testChecks } from './checks.js';
 import text from './data/checks_psf.csv';
+
+const MMHG_PER_HPA = 0.750062;
 
 const gaussian: Calculation = { notOurs: 'images are Moffat profiles here' };
 
@@ -146,6 +149,17 @@ describe('image profile, slit, seeing, scintillation, spectra, sub-exposures', (
     split: check => (check.output === 'n_sub' ? subCount(check) : check.input('T_total') / subCount(check)),
     snr_relative_to_no_readnoise: againstNoReadNoise,
     wall_time: { notOurs: 'the rows dither; ours is checked in tests/follow/exposure' },
-    differential_refraction: { notOurs: 'the slit is taken to lie along the parallactic angle' },
+    differential_refraction: check =>
+      dispersion_arcsec(
+        1000 * check.input('lambda_um'),
+        1000 * check.input('lambda0_um'),
+        // The rows take the airmass for the secant of the zenith distance.
+        (Math.acos(1 / check.input('X')) * 180) / Math.PI,
+        {
+          pressure_hPa: check.input('P_mmHg') / MMHG_PER_HPA,
+          temperature_C: check.input('T_C'),
+          vapour_hPa: check.input('f_mmHg') / MMHG_PER_HPA,
+        },
+      ),
   });
 });

@@ -8,6 +8,7 @@ import {
   scatteringFunction,
 } from '../../src/science/sky/moonlight.js';
 import { darkSky_magPerArcsec2, skyPath } from '../../src/science/sky/night-sky.js';
+import { refraction_deg, refractionFactor } from '../../src/science/sky/refraction.js';
 import {
   magnitudeOfNanolambert,
   nanolambert,
@@ -50,10 +51,15 @@ describe('airmass', () => {
     young_1994: check => airmass(check.input('h_true')),
     ks91_scattering: check => skyPath(90 - check.input('h')),
     raytrace_reference: { notOurs: 'given for apparent altitudes' },
-    saemundsson_1986: { notOurs: 'altitudes are airless throughout' },
-    bennett_1982: { notOurs: 'altitudes are airless throughout' },
-    pulkovo_comparison: { notOurs: 'altitudes are airless throughout' },
-    pressure_temperature_factor: { notOurs: 'altitudes are airless throughout' },
+    saemundsson_1986: check => 60 * refraction_deg(check.input('h_true')),
+    bennett_1982: { notOurs: 'given for apparent altitudes; what is known here is the airless one' },
+    pulkovo_comparison: { notOurs: 'given for apparent altitudes; what is known here is the airless one' },
+    pressure_temperature_factor: check =>
+      refractionFactor({
+        pressure_hPa: check.input('P_hPa'),
+        temperature_C: check.input('T_C'),
+        vapour_hPa: 0,
+      }),
   });
 
   it('is not known below the horizon', () => expect(airmass(-0.1)).toBeNaN());

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { Site } from '../../src/follow/settings.js';
-import { directionOf, Ephemeris } from '../../src/follow/sky/ephemeris.js';
+import { directionOf } from '../../src/follow/sky/direction.js';
+import { Ephemeris } from '../../src/follow/sky/ephemeris.js';
 import { nightOf } from '../../src/follow/sky/night-of.js';
 import { NightSky } from '../../src/follow/sky/window.js';
 import { parseTable, type Row } from '../../src/science/table.js';
@@ -19,6 +20,8 @@ function siteOf(row: Row): Site {
     minAltitude_deg: 30,
     maxAirmass: 10,
     sunLimit_deg: -12,
+    zenithLimit_deg: 0,
+    horizon: [],
     moonDistance_deg: 0,
     seeing_arcsec: 1,
   };

@@ -146,6 +146,7 @@ export function exposure(setup: string, count: number, each_s: number): Exposure
     snr: 52,
     limitedBy: 'sky',
     possible: true,
+    caution: '',
   };
 }
 

@@ -10,6 +10,8 @@ export const SITE: Site = {
   minAltitude_deg: 30,
   maxAirmass: 2.5,
   sunLimit_deg: -15,
+  zenithLimit_deg: 0,
+  horizon: [],
   moonDistance_deg: 30,
   seeing_arcsec: 1.5,
 };

@@ -9,6 +9,7 @@ import type { Conditions } from './suggestion.js';
 export function darkZenith(profile: Profile): Conditions {
   return {
     airmass: 1,
+    parallacticAngle_deg: Number.NaN,
     seeing_arcsec: profile.site.seeing_arcsec,
     siteHeight_m: profile.site.height_m,
     cloud_mag: 0,

@@ -4,6 +4,7 @@ import { type Passband, photonFluxAt, readPassbands } from '../../science/passba
 import type { Profile, Setup } from '../settings.js';
 import { imagerRates } from './imager.js';
 import { type PlannedExposure, planExposure, type Rates } from './plan-exposure.js';
+import { slitCaution } from './slit-caution.js';
 import { type KnownBands, spectrographRates } from './spectrograph.js';
 import type { Conditions, ExposureSuggestion } from './suggestion.js';
 
@@ -45,6 +46,7 @@ export class ExposureAdviser {
       snr: middle.snr,
       limitedBy: middle.limitedBy,
       possible: middle.possible,
+      caution: setup.kind === 'spectrograph' && middle.possible ? slitCaution(setup, conditions) : '',
     };
   }
 

@@ -18,6 +18,8 @@ export interface ExposureSuggestion {
   /** What takes most of the time: star, sky, read noise, scintillation; or why it cannot be done. */
   readonly limitedBy: string;
   readonly possible: boolean;
+  /** What to mind in doing it, in words; empty: nothing. */
+  readonly caution: string;
 }
 
 /** The sky an exposure is worked out for. */
@@ -26,6 +28,8 @@ export interface Conditions {
   /** At the zenith and 500 nm. */
   readonly seeing_arcsec: number;
   readonly siteHeight_m: number;
+  /** Position angle of the zenith at the target, from north through east; NaN: not known. */
+  readonly parallacticAngle_deg: number;
   /** Transparency lost to cloud, magnitudes. */
   readonly cloud_mag: number;
   /** Brightness of the sky at the target in a band of the profile, mag/arcsec^2; NaN in daylight (Sun above -5 deg). */

@@ -1,5 +1,6 @@
 import * as Astronomy from 'astronomy-engine';
 import type { Site } from '../settings.js';
+import { azimuthOf_deg, type Direction, directionOf, dot, type HorizonAxes } from './direction.js';
 
 /** TT - UTC, seconds, since 2017: 37 leap seconds + 32.184. */
 const TT_MINUS_UTC_S = 69.184;
@@ -7,14 +8,6 @@ const TT_MINUS_UTC_S = 69.184;
 const LIGHT_AU_PER_DAY = 173.1446326846693;
 const MS_PER_DAY = 86_400_000;
 const RADIAN = Math.PI / 180;
-
-/** A direction as a unit vector in the equator and equinox of J2000. */
-export type Direction = readonly [number, number, number];
-
-export function directionOf(ra_deg: number, dec_deg: number): Direction {
-  const cosine = Math.cos(dec_deg * RADIAN);
-  return [cosine * Math.cos(ra_deg * RADIAN), cosine * Math.sin(ra_deg * RADIAN), Math.sin(dec_deg * RADIAN)];
-}
 
 /**
  * Where things stand in the sky of a site. Sun, Moon and the Earth's orientation from astronomy-engine, which
@@ -29,22 +22,22 @@ export class Ephemeris {
     this.observer = new Astronomy.Observer(site.latitude_deg, site.longitude_deg, site.height_m);
   }
 
-  /** Row of the rotation from J2000 to the horizon that gives the sine of the altitude. */
-  zenithRow(time_ms: number): Direction {
+  /** The horizon's axes of date: precession, nutation and the turning of the Earth. */
+  horizonAxes(time_ms: number): HorizonAxes {
     const { rot } = Astronomy.Rotation_EQJ_HOR(timeOf(time_ms), this.observer);
-    return [rot[0][2], rot[1][2], rot[2][2]];
+    const axis = (i: number): Direction => [rot[0][i], rot[1][i], rot[2][i]];
+    return { north: axis(0), west: axis(1), up: axis(2) };
   }
 
   /** Airless altitude and azimuth (from north through east) of a star, degrees. */
   starPlace(direction: Direction, time_ms: number): { altitude_deg: number; azimuth_deg: number } {
-    const { rot } = Astronomy.Rotation_EQJ_HOR(timeOf(time_ms), this.observer);
-    const [x, y, z] = this.aberrationAt(time_ms)(direction);
-    const north = rot[0][0] * x + rot[1][0] * y + rot[2][0] * z;
-    const west = rot[0][1] * x + rot[1][1] * y + rot[2][1] * z;
-    const up = rot[0][2] * x + rot[1][2] * y + rot[2][2] * z;
+    const axes = this.horizonAxes(time_ms);
+    const apparent = this.aberrationAt(time_ms)(direction);
+    const north = dot(axes.north, apparent);
+    const west = dot(axes.west, apparent);
     return {
-      altitude_deg: Math.atan2(up, Math.hypot(north, west)) / RADIAN,
-      azimuth_deg: (Math.atan2(-west, north) / RADIAN + 360) % 360,
+      altitude_deg: Math.atan2(dot(axes.up, apparent), Math.hypot(north, west)) / RADIAN,
+      azimuth_deg: azimuthOf_deg(north, west),
     };
   }
 

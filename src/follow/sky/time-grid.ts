@@ -32,7 +32,7 @@ export class TimeGrid {
   }
 
   /** Value at a time within the grid, by the parabola through the three nearest points. */
-  at(values: readonly number[], time_ms: number): number {
+  at(values: ArrayLike<number>, time_ms: number): number {
     const k = Math.min(this.times.length - 2, Math.max(1, this.nearest(time_ms)));
     const x = (time_ms - this.times[k]) / this.step_ms;
     const a = values[k - 1];
@@ -41,31 +41,61 @@ export class TimeGrid {
     return b + ((c - a) / 2) * x + ((a - 2 * b + c) / 2) * x * x;
   }
 
-  /** Stretches in which something holds; one that is shorter than a step may be missed. */
-  spans(holds: (time_ms: number) => boolean): Span[] {
-    const spans: Span[] = [];
-    let from = Number.NaN;
-    for (let i = 0; i < this.times.length; i++) {
-      const good = holds(this.times[i]);
-      if (good && Number.isNaN(from)) from = i === 0 ? this.times[0] : this.turn(i, holds);
-      if (!good && !Number.isNaN(from)) {
-        spans.push([from, this.turn(i, holds)]);
-        from = Number.NaN;
+  /**
+   * When smooth values pass a level, in order of time; both passings of a step that begins and ends on the same side.
+   */
+  crossings(values: ArrayLike<number>, level: number): number[] {
+    const isBelow = (time_ms: number) => this.at(values, time_ms) < level;
+    const found: number[] = [];
+    for (let i = 1; i < this.times.length; i++) {
+      const [from, until] = [this.times[i - 1], this.times[i]];
+      const before = values[i - 1] < level;
+      if (values[i] < level !== before) {
+        found.push(turnBetween(from, until, isBelow));
+        continue;
       }
+      const peak = this.peakBetween(values, i);
+      if (peak > from && peak < until && isBelow(peak) !== before)
+        found.push(turnBetween(from, peak, isBelow), turnBetween(peak, until, isBelow));
     }
-    if (!Number.isNaN(from)) spans.push([from, this.until_ms]);
-    return spans;
+    return found;
   }
 
-  /** When something begins or ends to hold between the points i-1 and i. */
-  private turn(i: number, holds: (time_ms: number) => boolean): number {
-    let [low, high] = [this.times[i - 1], this.times[i]];
-    const before = holds(low);
-    for (let n = 0; n < BISECTIONS; n++) {
-      const middle = (low + high) / 2;
-      if (holds(middle) === before) low = middle;
-      else high = middle;
+  /** Vertex of the values' parabolas between the points i-1 and i; NaN where they only rise or sink. */
+  private peakBetween(values: ArrayLike<number>, i: number): number {
+    for (let k = i - 1; k <= i; k++) {
+      if (k < 1 || k > this.times.length - 2) continue;
+      const bend = values[k - 1] - 2 * values[k] + values[k + 1];
+      const peak = this.times[k] + ((values[k - 1] - values[k + 1]) / (2 * bend)) * this.step_ms;
+      if (peak >= this.times[i - 1] && peak <= this.times[i]) return peak;
     }
-    return (low + high) / 2;
+    return Number.NaN;
   }
+
+  /** Stretches in which something holds that changes at the given times alone, in whatever order they are. */
+  spans(turns: readonly number[], holds: (time_ms: number) => boolean): Span[] {
+    const edges =
+      this.times.length === 0 ? [] : [this.times[0], ...turns, this.until_ms].sort((a, b) => a - b);
+    const spans: [number, number][] = [];
+    for (let i = 1; i < edges.length; i++) {
+      const [from, until] = [edges[i - 1], edges[i]];
+      if (from === until || !holds((from + until) / 2)) continue;
+      const last = spans.at(-1);
+      if (last?.[1] === from) last[1] = until;
+      else spans.push([from, until]);
+    }
+    return spans;
+  }
+}
+
+/** When something that differs at two times changes between them. */
+export function turnBetween(from_ms: number, until_ms: number, holds: (time_ms: number) => boolean): number {
+  let [low, high] = [from_ms, until_ms];
+  const before = holds(low);
+  for (let n = 0; n < BISECTIONS; n++) {
+    const middle = (low + high) / 2;
+    if (holds(middle) === before) low = middle;
+    else high = middle;
+  }
+  return (low + high) / 2;
 }

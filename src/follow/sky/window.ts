@@ -1,11 +1,23 @@
-import { airmass, altitudeOfAirmass_deg } from '../../science/sky/airmass.js';
+import { airmass } from '../../science/sky/airmass.js';
+import { parallacticAngle_deg } from '../../science/sky/parallactic-angle.js';
 import type { Site } from '../settings.js';
-import { type Direction, directionOf, type Ephemeris } from './ephemeris.js';
-import { clock, type Night } from './night-of.js';
+import {
+  altitudeIn_deg,
+  azimuthOf_deg,
+  type Direction,
+  directionOf,
+  dot,
+  type HorizonAxes,
+  separation_deg,
+} from './direction.js';
+import type { Ephemeris } from './ephemeris.js';
+import type { Night } from './night-of.js';
 import type { SkyGeometry } from './sky-light.js';
+import { limitsOf } from './sky-limits.js';
+import { type NightFrame, StarPath } from './star-path.js';
 import { type Span, TimeGrid } from './time-grid.js';
+import { whyEnds, whyNever, whyTooShort } from './window-words.js';
 
-const RADIAN = Math.PI / 180;
 const STEP_MS = 5 * 60_000;
 
 /** When a star can be observed in the rest of a night, and until when it must be begun. Times in Unix ms. */
@@ -27,70 +39,62 @@ export interface StarTonight {
   readonly altitudeNow_deg: number;
   readonly airmassNow: number;
   readonly spans: readonly Span[];
+  /** Why there is no stretch any more. */
   readonly whyNever: () => string;
+  /** Why one ends, to go before 'at 02:14 UT': 'sets below airmass 2.0'. */
+  readonly whyEnds: (until_ms: number) => string;
 }
 
 /** What is the same for all stars at one time. */
 interface Moment {
   readonly time_ms: number;
-  readonly zenith: Direction;
+  readonly axes: HorizonAxes;
   readonly moon: Direction;
   readonly moonAltitude_deg: number;
   readonly phaseAngle_deg: number;
   readonly sunAltitude_deg: number;
 }
 
-/** One star on the night's grid: smooth values, so that the parabolas between the points hold. */
-interface Path {
-  readonly sinAltitude: readonly number[];
-  readonly cosMoonDistance: readonly number[];
-}
-
-/**
- * The sky of one night on a grid of five minutes, made once and used for every star: quadratic interpolation
- * in it is good to an arcsecond, far below what a window needs.
- */
+/** The sky of one night on a grid of five minutes, made once and used for every star. */
 export class NightSky {
-  private readonly grid: TimeGrid;
+  private readonly frame: NightFrame;
   private readonly moments: readonly Moment[];
-  private readonly moonAltitude_deg: readonly number[];
-  private readonly limit_deg: number;
-  private readonly sinLimit: number;
-  private readonly cosMoonLimit: number;
   /** The Earth's motion turns by a degree a day: one aberration serves the night. */
   private readonly toApparent: (direction: Direction) => Direction;
   private kept: Moment | undefined;
-  private zenithKept: { readonly time_ms: number; readonly row: Direction } | undefined;
+  private axesKept: { readonly time_ms: number; readonly axes: HorizonAxes } | undefined;
 
   constructor(
     private readonly ephemeris: Ephemeris,
     private readonly site: Site,
     readonly night: Night,
   ) {
-    this.grid = new TimeGrid(night.dark.dusk_ms, night.dark.dawn_ms, STEP_MS);
-    this.moments = Array.from(this.grid.times, time => this.momentAt(time));
-    this.moonAltitude_deg = this.moments.map(moment => moment.moonAltitude_deg);
+    const grid = new TimeGrid(night.dark.dusk_ms, night.dark.dawn_ms, STEP_MS);
+    this.moments = Array.from(grid.times, time => this.momentAt(time));
+    const moonAltitude_deg = this.moments.map(moment => moment.moonAltitude_deg);
+    this.frame = {
+      grid,
+      axes: this.moments.map(moment => moment.axes),
+      moon: this.moments.map(moment => moment.moon),
+      moonAltitude_deg,
+      moonTurns: grid.crossings(moonAltitude_deg, 0),
+      limits: limitsOf(site),
+    };
     this.toApparent = ephemeris.aberrationAt((night.noon_ms + night.nextNoon_ms) / 2);
-    this.limit_deg = Math.max(site.minAltitude_deg, altitudeOfAirmass_deg(site.maxAirmass));
-    this.sinLimit = Math.sin(this.limit_deg * RADIAN);
-    this.cosMoonLimit = Math.cos(site.moonDistance_deg * RADIAN);
   }
 
   /** How a star stands tonight, whatever is done with it. */
   follow(ra_deg: number, dec_deg: number, now_ms: number): StarTonight {
     const direction = this.toApparent(directionOf(ra_deg, dec_deg));
-    const altitudeNow_deg = altitudeIn(this.zenithAt(now_ms), direction);
-    const path: Path = {
-      sinAltitude: this.moments.map(({ zenith }) => dot(zenith, direction)),
-      cosMoonDistance: this.moments.map(({ moon }) => dot(moon, direction)),
-    };
-    const spans = this.grid.spans(time => this.isHigh(path, time) && !this.isMoonNear(path, time));
+    const altitudeNow_deg = altitudeIn_deg(this.axesAt(now_ms).up, direction);
+    const path = new StarPath(this.frame, direction);
     return {
       now_ms,
       altitudeNow_deg,
       airmassNow: airmass(altitudeNow_deg),
-      spans: spans.filter(([, until]) => until > now_ms),
-      whyNever: () => this.whyNever(path, now_ms),
+      spans: path.openSpans().filter(([, until]) => until > now_ms),
+      whyNever: () => whyNever(path, this.frame, this.site.sunLimit_deg, now_ms),
+      whyEnds: until_ms => whyEnds(path, this.frame, until_ms),
     };
   }
 
@@ -108,7 +112,7 @@ export class NightSky {
       upFrom_ms,
       upUntil_ms,
       startBy_ms: fits ? startBy : Number.NaN,
-      blockedBy: fits ? '' : this.whyTooShort(upFrom_ms, upUntil_ms, now_ms, wall_s),
+      blockedBy: fits ? '' : whyTooShort(upFrom_ms, upUntil_ms, now_ms, wall_s),
     };
   }
 
@@ -124,13 +128,21 @@ export class NightSky {
       sunAltitude_deg: moment.sunAltitude_deg,
       moonZenithDistance_deg: 90 - moment.moonAltitude_deg,
       separation_deg: separation_deg(moment.moon, direction),
-      targetZenithDistance_deg: 90 - altitudeIn(moment.zenith, direction),
+      targetZenithDistance_deg: 90 - altitudeIn_deg(moment.axes.up, direction),
     };
+  }
+
+  /** Position angle of the zenith at a target, degrees, at the nearest point of the grid as in `geometryAt`. */
+  parallacticAngle_deg(ra_deg: number, dec_deg: number, time_ms: number): number {
+    const { axes } = this.momentOf(time_ms);
+    const direction = this.toApparent(directionOf(ra_deg, dec_deg));
+    const azimuth_deg = azimuthOf_deg(dot(axes.north, direction), dot(axes.west, direction));
+    return parallacticAngle_deg(this.site.latitude_deg, altitudeIn_deg(axes.up, direction), azimuth_deg);
   }
 
   /** What is the same for all stars at one time: from the grid where it reaches, else worked out and kept. */
   private momentOf(time_ms: number): Moment {
-    if (this.grid.covers(time_ms)) return this.moments[this.grid.nearest(time_ms)];
+    if (this.frame.grid.covers(time_ms)) return this.moments[this.frame.grid.nearest(time_ms)];
     if (this.kept?.time_ms !== time_ms) this.kept = this.momentAt(time_ms);
     return this.kept;
   }
@@ -139,7 +151,7 @@ export class NightSky {
     const { ephemeris } = this;
     return {
       time_ms,
-      zenith: ephemeris.zenithRow(time_ms),
+      axes: ephemeris.horizonAxes(time_ms),
       moon: ephemeris.moonDirection(time_ms),
       moonAltitude_deg: ephemeris.moonAltitude_deg(time_ms),
       phaseAngle_deg: ephemeris.moonPhaseAngle_deg(time_ms),
@@ -147,60 +159,13 @@ export class NightSky {
     };
   }
 
-  /** Rotation to the zenith at one time, kept for the stars that are looked at together. */
-  private zenithAt(time_ms: number): Direction {
-    if (this.zenithKept?.time_ms !== time_ms) {
-      this.zenithKept = { time_ms, row: this.ephemeris.zenithRow(time_ms) };
+  /** The horizon at one time, kept for the stars that are looked at together. */
+  private axesAt(time_ms: number): HorizonAxes {
+    if (this.axesKept?.time_ms !== time_ms) {
+      this.axesKept = { time_ms, axes: this.ephemeris.horizonAxes(time_ms) };
     }
-    return this.zenithKept.row;
-  }
-
-  private isHigh(path: Path, time_ms: number): boolean {
-    return this.grid.at(path.sinAltitude, time_ms) >= this.sinLimit;
-  }
-
-  private isMoonNear(path: Path, time_ms: number): boolean {
-    return (
-      this.grid.at(path.cosMoonDistance, time_ms) > this.cosMoonLimit &&
-      this.grid.at(this.moonAltitude_deg, time_ms) > 0
-    );
-  }
-
-  private whyNever(path: Path, now_ms: number): string {
-    const { grid, site } = this;
-    const limit = this.limit_deg.toFixed(0);
-    if (grid.times.length === 0) return 'no dark time tonight: the Sun stays too high';
-    if (now_ms >= grid.until_ms) {
-      return `the night is over (Sun above ${site.sunLimit_deg} deg since ${clock(grid.until_ms)} UT)`;
-    }
-    const lastHigh = grid.spans(time => this.isHigh(path, time)).at(-1);
-    if (lastHigh === undefined) {
-      const highest_deg = Math.asin(Math.max(...path.sinAltitude)) / RADIAN;
-      return `never above ${limit} deg in the dark (highest ${Math.floor(highest_deg)} deg)`;
-    }
-    if (lastHigh[1] <= now_ms) return `below ${limit} deg since ${clock(lastHigh[1])} UT`;
-    const nearest = Math.max(...path.cosMoonDistance);
-    const distance_deg = Math.acos(Math.min(1, nearest)) / RADIAN;
-    return `the Moon is too near (${distance_deg.toFixed(0)} deg, limit ${site.moonDistance_deg} deg)`;
-  }
-
-  private whyTooShort(from: number, until: number, now: number, wall_s: number): string {
-    const left = Math.round((until - Math.max(from, now)) / 60_000);
-    return `needs ${Math.round(wall_s / 60)} min, only ${left} min before ${clock(until)} UT`;
+    return this.axesKept.axes;
   }
 }
 
 const NEVER = { upFrom_ms: Number.NaN, upUntil_ms: Number.NaN, startBy_ms: Number.NaN } as const;
-
-function dot(a: Direction, b: Direction): number {
-  return a[0] * b[0] + a[1] * b[1] + a[2] * b[2];
-}
-
-function altitudeIn(zenith: Direction, direction: Direction): number {
-  return Math.asin(Math.max(-1, Math.min(1, dot(zenith, direction)))) / RADIAN;
-}
-
-function separation_deg(a: Direction, b: Direction): number {
-  const cross = Math.hypot(a[1] * b[2] - a[2] * b[1], a[2] * b[0] - a[0] * b[2], a[0] * b[1] - a[1] * b[0]);
-  return Math.atan2(cross, dot(a, b)) / RADIAN;
-}

@@ -71,7 +71,9 @@ function expectation(issue: z.core.$ZodIssue): string {
         ? 'text in quotes'
         : issue.expected === 'array'
           ? 'a list ([[...]])'
-          : `a ${issue.expected}`;
+          : issue.expected === 'tuple'
+            ? 'a pair ([azimuth, altitude])'
+            : `a ${issue.expected}`;
     case 'invalid_value':
       return `one of ${issue.values.join(', ')}`;
     case 'invalid_union':
@@ -134,6 +136,8 @@ function toProfile(file: ProfileFile): Profile {
       minAltitude_deg: file.site.min_altitude_deg,
       maxAirmass: file.site.max_airmass,
       sunLimit_deg: file.site.sun_limit_deg,
+      zenithLimit_deg: file.site.zenith_limit_deg,
+      horizon: file.site.horizon,
       moonDistance_deg: file.site.moon_distance_deg,
       seeing_arcsec: file.site.seeing_arcsec,
     },

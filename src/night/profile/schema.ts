@@ -19,6 +19,14 @@ const site = z.strictObject({
   min_altitude_deg: between(5, 89).default(25),
   max_airmass: between(1, 10).default(2.3),
   sun_limit_deg: between(-30, -6).default(-15),
+  zenith_limit_deg: between(0, 45).default(0),
+  horizon: z
+    .array(z.tuple([between(0, 360), between(0, 89)]))
+    .max(1000)
+    .default([])
+    .refine(corners => corners.every(([azimuth], i) => i === 0 || azimuth >= corners[i - 1][0]), {
+      message: 'corners [azimuth, altitude] in order of azimuth, from north through east',
+    }),
   moon_distance_deg: between(0, 180).default(25),
   seeing_arcsec: between(0.2, 10),
 });

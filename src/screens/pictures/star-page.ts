@@ -34,7 +34,7 @@ export function starPage(
     ...reasons(detail, width, glyphs),
     ...times(detail, now_ms, width),
     [],
-    ...exposures(detail),
+    ...exposures(detail, width),
     [],
   ];
   const half = Math.floor((width - COLUMN_GAP) / 2);
@@ -73,11 +73,7 @@ function reasons(detail: StarDetail, width: number, glyphs: GlyphName): Line[] {
     ...byOdds(detail.flags).flatMap(flag =>
       wrapped(sentence(`${flagWords(flag.code)}: ${flag.because}`, glyphs), width).map(text => [plain(text)]),
     ),
-    ...detail.cautions.flatMap(caution =>
-      wrapped(sentence(`but ${caution}`, glyphs), width).map(text => [
-        { text, style: { colour: 'warning' } } as const,
-      ]),
-    ),
+    ...detail.cautions.flatMap(caution => warningLines(sentence(`but ${caution}`, glyphs), width)),
   ];
 }
 
@@ -95,12 +91,22 @@ function times({ window }: StarDetail, now_ms: number, width: number): Line[] {
   ]);
 }
 
-/** One line a setup: how long, in all with its range, what limits it. */
-function exposures(detail: StarDetail): Line[] {
+/** One line a setup: how long, in all with its range, what limits it; below what to mind. */
+function exposures(detail: StarDetail, width: number): Line[] {
   if (detail.exposures.length === 0) return [[dim('No follow-up setup in the profile.')]];
   const setupWidth = Math.max(8, ...detail.exposures.map(exposure => exposure.setup.length)) + 2;
   const head = `${'setup'.padEnd(setupWidth)}${'mag'.padEnd(7)}${'exposure'.padEnd(12)}${'in all'.padEnd(18)}${'S/N'.padEnd(5)}limited by`;
-  return [[dim(head)], ...detail.exposures.map(exposure => exposureLine(exposure, setupWidth))];
+  return [
+    [dim(head)],
+    ...detail.exposures.map(exposure => exposureLine(exposure, setupWidth)),
+    ...detail.exposures
+      .filter(({ caution }) => caution !== '')
+      .flatMap(({ setup, caution }) => warningLines(`${setup}: ${caution}`, width)),
+  ];
+}
+
+function warningLines(text: string, width: number): Line[] {
+  return wrapped(text, width).map(line => [{ text: line, style: { colour: 'warning' } }]);
 }
 
 function exposureLine(exposure: ExposureSuggestion, setupWidth: number): Line {

@@ -1,7 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { Site } from '../../../src/follow/settings.js';
-import { directionOf, Ephemeris } from '../../../src/follow/sky/ephemeris.js';
+import { directionOf } from '../../../src/follow/sky/direction.js';
+import { Ephemeris } from '../../../src/follow/sky/ephemeris.js';
 import { darkWords, nightOf } from '../../../src/follow/sky/night-of.js';
 import { NightSky } from '../../../src/follow/sky/window.js';
 import { SITE } from '../../support/site.js';

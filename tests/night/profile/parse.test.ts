@@ -71,6 +71,21 @@ describe('what is wrong is told with file, line, key, what was seen and what was
       '"mag.R" = "R"',
       /mine\.toml:\d+: columns\.mag\.R: saw "R", expected a meaning such as ra, dec/,
     ],
+    [
+      'horizon = []',
+      'horizon = [[0, 20], [90, 95]]',
+      /mine\.toml:\d+: site\.horizon\.#2\.#2: saw 95, expected at most 89$/,
+    ],
+    [
+      'horizon = []',
+      'horizon = [[90, 20], [40, 30]]',
+      /site\.horizon: saw \[\[90,20\],\[40,30\]\], expected corners \[azimuth, altitude\] in order of azimuth/,
+    ],
+    [
+      'horizon = []',
+      'horizon = [0, 20]',
+      /site\.horizon\.#1: saw 0, expected a pair \(\[azimuth, altitude\]\)/,
+    ],
     ['name = "My hill"', 'name = "My hill', /^mine\.toml:8: not TOML/],
   ])('%s -> %s', (from, to, wording) => {
     const told = changed(from, to);
