@@ -1,6 +1,6 @@
+import { Random } from '../../science/random.js';
 import { type Candidate, isBetter } from './candidate.js';
 import { type Problem, weights } from './problem.js';
-import { Random } from './random.js';
 import { Route } from './route.js';
 
 /** Places tested in all: the bound of the work, the same on every machine. */
@@ -40,9 +40,9 @@ export function nearExactOrder(problem: Problem): readonly number[] {
   let current = best;
   while (route.tests < MOST_TESTS && current.order.length < problem.jobs.length) {
     const temperature = middling * WARM * (COLD / WARM) ** (route.tests / MOST_TESTS);
-    const found = filled(ruined(current.order, problem.kept, random), () => 0.5 + random.next());
+    const found = filled(ruined(current.order, problem.kept, random), () => 0.5 + random.uniform());
     const loss = current.worth - found.worth;
-    if (loss <= 0 || random.next() < Math.exp(-loss / temperature)) current = found;
+    if (loss <= 0 || random.uniform() < Math.exp(-loss / temperature)) current = found;
     if (isBetter(found, best)) best = found;
   }
   return best.order;
@@ -63,10 +63,10 @@ function fill(route: Route, problem: Problem, weight: Float64Array, noise: () =>
 
 /** Takes out a run or a scatter of the jobs that need not stay. */
 function ruined(order: readonly number[], kept: readonly boolean[], random: Random): number[] {
-  const size = 1 + random.below(Math.max(1, Math.floor(order.length * LARGEST_RUIN)));
-  if (random.next() < 0.5) {
-    const from = random.below(order.length);
+  const size = 1 + Math.floor(random.uniform() * Math.max(1, Math.floor(order.length * LARGEST_RUIN)));
+  if (random.uniform() < 0.5) {
+    const from = Math.floor(random.uniform() * order.length);
     return order.filter((job, place) => kept[job] || place < from || place >= from + size);
   }
-  return order.filter(job => kept[job] || random.next() * order.length >= size);
+  return order.filter(job => kept[job] || random.uniform() * order.length >= size);
 }
